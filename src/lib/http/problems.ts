@@ -62,7 +62,11 @@ export class ProblemError extends Error {
   readonly errors: InputFault[] | undefined;
   readonly headers: Readonly<Record<string, string>>;
 
-  constructor(code: ProblemCode, detail: string, more: { errors?: InputFault[]; headers?: Record<string, string> } = {}) {
+  constructor(
+    code: ProblemCode,
+    detail: string,
+    more: { errors?: InputFault[]; headers?: Record<string, string> } = {},
+  ) {
     super(detail);
     this.code = code;
     this.errors = more.errors;

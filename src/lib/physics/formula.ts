@@ -104,7 +104,10 @@ function normalise(text: string): string[] {
     if (subscript >= 0) return String(subscript);
     return HYDRATE_DOTS.includes(character) ? "·" : character;
   });
-  const trimmed = mapped.join("").trim().replace(/ *· */g, "·");
+  const trimmed = mapped
+    .join("")
+    .trim()
+    .replace(/ *· *([0-9.]*) */g, "·$1");
   if (trimmed === "") {
     throw new FormulaError({
       code: "empty",
@@ -343,13 +346,20 @@ class Parser {
     throw this.fault(
       "ambiguousHydrate",
       start,
-      `The point at ${start + 1 + (integer ?? "").length} can be read two ways. Write ${hydrate} for ${decimals} water, or ${decimal} for the count ${whole}.`,
+      `The point at ${start + 1 + (integer ?? "").length} can be read two ways. Write ${hydrate} for ${decimals} H2O of crystallisation, or ${decimal} for a count of ${whole}.`,
       [hydrate, decimal],
     );
   }
 
   private unexpected(character: string): FormulaError {
     const position = this.index + 1;
+    if (character === "e" && isDigit(this.peek(-1))) {
+      return this.fault(
+        "countMalformed",
+        this.index,
+        `The count before ${position} has an exponent. Write it in full, at most ${FORMULA_LIMITS.count}.`,
+      );
+    }
     if (isLower(character)) {
       const mended = mendCase(this.characters.join(""));
       const hint = mended ? ` Did you mean ${mended}?` : " Write for example Co for cobalt, CO for carbon monoxide.";
