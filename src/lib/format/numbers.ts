@@ -40,7 +40,15 @@ export function formatSignificant(value: number | null, digits: number = DEFAULT
   return { mantissa: sign + groupThousands(plainDigits(significand.replace(".", ""), exponent)), exponent: null };
 }
 
-/** The same as one line of text, for titles, labels and copied sentences: `4.62 × 10⁻⁷`. */
+/** A constant or another exact number with every digit it has, in powers of ten outside 0.001 to 100 000. */
+export function formatExact(value: number): NumberParts {
+  const digits = Math.abs(value).toExponential().split("e")[0]!.replace(".", "").length;
+  const parts = formatSignificant(value, Math.min(digits, 17));
+  if (parts === null) throw new RangeError("A constant without a finite value cannot be shown.");
+  return parts;
+}
+
+/** `formatSignificant` as one line of text, for titles, labels and copied sentences: `4.62 × 10⁻⁷`. */
 export function significantText(value: number | null, digits: number = DEFAULT_DIGITS): string {
   const parts = formatSignificant(value, digits);
   return parts === null ? "no value" : partsText(parts);
@@ -70,7 +78,7 @@ export function formatFixed(value: number, decimals: number): string {
 }
 
 /**
- * A share as percent with `digits` significant digits, no more than needed below 0.1 %.
+ * A share as percent with `digits` significant digits; what is smaller than 0.01 % either way reads "below 0.01 %".
  * @example formatPercent(0.0312) // "3.1 %"
  */
 export function formatPercent(share: number, digits: number = 2): string {
@@ -78,7 +86,7 @@ export function formatPercent(share: number, digits: number = 2): string {
   if (percent === 0) return `0${NO_BREAK_SPACE}%`;
   const magnitude = Math.abs(percent);
   const sign = percent < 0 ? MINUS : "";
-  if (magnitude < 0.01) return `${percent < 0 ? "above −" : "below "}0.01${NO_BREAK_SPACE}%`;
+  if (magnitude < 0.01) return `below 0.01${NO_BREAK_SPACE}%`;
   return `${sign}${groupThousands(Number(magnitude.toPrecision(digits)).toString())}${NO_BREAK_SPACE}%`;
 }
 
