@@ -1,7 +1,8 @@
 /** Named values with dotted leaders; each name links to the paragraph that says how the value is made. */
 import type { ReactNode } from "react";
 import { methodHref } from "#src/lib/format/method-links.ts";
-import { QUANTITIES, symbolParts, type QuantityKey, type Technique } from "#src/lib/format/quantities.ts";
+import { QUANTITIES, type QuantityKey, type Technique } from "#src/lib/format/quantities.ts";
+import { symbolParts } from "#src/lib/format/symbols.ts";
 import { Mark } from "./Mark.tsx";
 import { Quantity } from "./Quantity.tsx";
 import { Scripts } from "./Scripts.tsx";

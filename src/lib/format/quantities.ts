@@ -112,10 +112,11 @@ export const QUANTITIES = {
 
 export type QuantityKey = keyof typeof QUANTITIES;
 
-/** Symbol as parts, an index after `_` as a subscript: `β_eff`, `m_e c²`. */
+/** Symbol as parts, its index as a subscript: `β_eff` is β with subscript eff, `δ/β_eff` likewise. */
 export function symbolParts(symbol: string): { text: string; script: "base" | "sub" }[] {
-  return symbol
-    .split(/_([A-Za-z]+)/)
-    .map((text, place) => ({ text, script: place % 2 === 1 ? ("sub" as const) : ("base" as const) }))
-    .filter(({ text }) => text !== "");
+  const [base = "", index] = symbol.split("_");
+  return [
+    { text: base, script: "base" as const },
+    ...(index === undefined ? [] : [{ text: index, script: "sub" as const }]),
+  ];
 }

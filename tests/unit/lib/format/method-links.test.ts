@@ -2,7 +2,8 @@ import { readdirSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { describe, expect, test } from "vitest";
 import { METHOD_TOPICS, methodHref, methodTopicHref, NOTE_EXPLANATIONS } from "#src/lib/format/method-links.ts";
-import { QUANTITIES, symbolParts, type QuantityKey } from "#src/lib/format/quantities.ts";
+import { QUANTITIES, type QuantityKey } from "#src/lib/format/quantities.ts";
+import { symbolParts } from "#src/lib/format/symbols.ts";
 
 const SECTIONS = join(import.meta.dirname, "../../../../src/components/site/method");
 const ids = readdirSync(SECTIONS)
