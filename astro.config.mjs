@@ -8,7 +8,7 @@ import { defineConfig } from "astro/config";
 export default defineConfig({
   output: "server",
   adapter: node({ mode: "middleware" }),
-  integrations: [react()],
+  integrations: [react(), developmentDatabase()],
   security: { checkOrigin: false },
   trailingSlash: "ignore",
   devToolbar: { enabled: false },
@@ -31,3 +31,17 @@ export default defineConfig({
     },
   },
 });
+
+/** `npm run dev` has no front server, so the development server starts the database itself. */
+function developmentDatabase() {
+  return {
+    name: "development-database",
+    hooks: {
+      "astro:server:setup": async ({ server }) => {
+        const { startDatabase } = await server.ssrLoadModule("/src/db/database.ts");
+        const { readSettings } = await server.ssrLoadModule("/src/lib/settings.ts");
+        await startDatabase(readSettings().databaseUrl);
+      },
+    },
+  };
+}

@@ -1,0 +1,18 @@
+import type { APIRoute } from "astro";
+import { PROBLEM_TYPE, problemDocument } from "#src/lib/http/problems.ts";
+import { checkHealth } from "#src/lib/services/health.ts";
+
+/** `GET /api/v1/health`: 200 while tables and database answer, else 503. */
+export const GET: APIRoute = async ({ url, locals }) => {
+  const health = await checkHealth();
+  const headers = { "cache-control": "no-store" };
+  if (health.status === "ok") return Response.json(health, { headers });
+  const problem = problemDocument("notReady", "The tables or the database do not answer. Try again shortly.", {
+    path: url.pathname,
+    requestId: locals.requestId,
+  });
+  return new Response(JSON.stringify(problem), {
+    status: problem.status,
+    headers: { ...headers, "content-type": PROBLEM_TYPE, "retry-after": "5" },
+  });
+};
