@@ -61,7 +61,9 @@ function installedMatchesLock() {
     const installed = readJson("node_modules/.package-lock.json").packages;
     return Object.entries(locked).every(
       ([path, entry]) =>
-        path === "" || installed[path]?.version === entry.version || (installed[path] === undefined && entry.optional),
+        path === "" ||
+        (installed[path] === undefined && entry.optional) ||
+        (installed[path]?.version === entry.version && existsSync(join(ROOT, path, "package.json"))),
     );
   } catch {
     return false;
