@@ -55,7 +55,7 @@ export function addressRule(trust: TrustProxy | null): AddressRule {
 
 /** Removes what a caller must not set, and writes the one address where the pages' server looks for it. */
 export function replaceForwarding(headers: IncomingHttpHeaders, address: string): void {
-  for (const name of FORWARDING_HEADERS) delete headers[name];
+  for (const name of FORWARDING_HEADERS) headers[name] = undefined;
   headers["x-forwarded-for"] = address;
   headers["x-client-address"] = address;
 }

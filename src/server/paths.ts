@@ -22,7 +22,6 @@ const NEEDLESSLY_ENCODED = /[A-Za-z0-9\-._~/\\%;]/;
 /** Controls, invisible characters, lone surrogates. */
 const UNSEEN = /[\p{Cc}\p{Cf}\p{Cs}]/u;
 /** Controls other than those that a pasted column of values brings. */
-// eslint-disable-next-line no-control-regex -- controls are what it looks for
 const QUERY_CONTROLS = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/;
 
 /** Throws ProblemError: addressTooLong, badPath, malformed or repeatedKey. */
