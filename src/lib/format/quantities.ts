@@ -25,6 +25,13 @@ export const QUANTITIES = {
     technique: "phase",
     anchor: "phase-shift",
   },
+  twoPiMicrometre: {
+    name: "Thickness for 2π",
+    symbol: "λ/δ",
+    unit: "µm",
+    technique: "phase",
+    anchor: "phase-shift",
+  },
   criticalAngleMrad: {
     name: "Critical angle",
     symbol: "θ_c",
