@@ -15,7 +15,8 @@ export interface Database {
   readonly db: LibSQLDatabase;
   /** Null where a libSQL server is used. */
   readonly file: string | null;
-  close(): void;
+  /** Moves what stands in the write-ahead log into the file, so that the file alone is whole, and closes. */
+  close(): Promise<void>;
 }
 
 /** "RIME": says whose file this is, to `file` and to us. */
@@ -82,7 +83,18 @@ async function openServer(url: string, migrations: string): Promise<Database> {
 
 function wrap(bare: Client, file: string | null): Database {
   const client = withWriteQueue(bare);
-  return { client, db: drizzle(client), file, close: () => bare.close() };
+  return {
+    client,
+    db: drizzle(client),
+    file,
+    close: async () => {
+      try {
+        if (file !== null) await client.execute("PRAGMA wal_checkpoint(TRUNCATE)");
+      } finally {
+        bare.close();
+      }
+    },
+  };
 }
 
 /** That the file is ours and whole. `quick_check` reads every page: 30 ms for the tables alone. */

@@ -29,7 +29,7 @@ async function start(databaseUrl: string, options: { init?: boolean }): Promise<
     const tables = await seedTables(database.client);
     return { ...database, tables };
   } catch (error) {
-    database.close();
+    await database.close();
     throw error;
   }
 }

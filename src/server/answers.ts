@@ -92,10 +92,10 @@ export function clientProblem(error: Error & { code?: string; rawPacket?: Buffer
     case "ERR_HTTP_REQUEST_TIMEOUT":
       return say("requestTimeout", "The request did not arrive completely in time.");
     case "HPE_INVALID_METHOD":
+      if (!/^[A-Z]+ \//.test(error.rawPacket?.toString("latin1") ?? "")) break;
       return say("methodNotAllowed", "That method is not known here.");
-    default:
-      return say("malformed", "This is not a request of HTTP/1.1 that can be read.");
   }
+  return say("malformed", "This is not a request of HTTP/1.1 that can be read.");
 }
 
 function requestLineTooLong(packet: Buffer | undefined): boolean {

@@ -14,11 +14,12 @@ import { askPages, type PageHandler } from "./adapter.ts";
 import { clientProblem, isApiPath, problemOf, sendProblem, writeRawProblem } from "./answers.ts";
 import { checkBodyHeaders, MAX_BODY_BYTES } from "./bodies.ts";
 import { addressRule, replaceForwarding } from "./clientAddress.ts";
+import { trackConnections } from "./connections.ts";
 import { policyFor, securityHeaders } from "./headers.ts";
 import { checkIdentity } from "./identity.ts";
 import { lookupLimits } from "./limits.ts";
 import { type Address, readAddress } from "./paths.ts";
-import { createShedding } from "./shedding.ts";
+import { createShedding, MAX_DELAY_MS } from "./shedding.ts";
 import { checkHost, checkOrigin, siteOf } from "./site.ts";
 import { staticFiles } from "./statics.ts";
 
@@ -50,6 +51,8 @@ export interface FrontOptions {
   readonly clientFolder: string | null;
   readonly log: FastifyBaseLogger;
   readonly timeouts?: Partial<Timeouts>;
+  /** Above this delay of timers requests are refused. */
+  readonly maxDelayMs?: number;
 }
 
 export interface Front {
@@ -92,8 +95,9 @@ export async function createFront(options: FrontOptions): Promise<Front> {
   });
   app.server.maxConnections = MAX_CONNECTIONS;
   guardServer(app, headers);
+  const closeQuietConnections = trackConnections(app.server);
 
-  const shed = await createShedding(app);
+  const shed = createShedding(app, options.maxDelayMs ?? MAX_DELAY_MS);
   const limit = await lookupLimits(app, settings.limitsFactor);
   const files = options.clientFolder === null ? null : staticFiles(options.clientFolder);
   if (files !== null) await app.register(fastifyStatic, files.options);
@@ -185,6 +189,7 @@ export async function createFront(options: FrontOptions): Promise<Front> {
     app,
     startClosing: () => {
       closing = true;
+      closeQuietConnections();
     },
   };
 }

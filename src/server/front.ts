@@ -25,7 +25,7 @@ export async function serve({ init, step, say }: ServeOptions): Promise<void> {
     const settings = readSettings();
     await checkPort(settings);
     const log = createLog(settings.logLevel);
-    let close = (): void => undefined;
+    let close = async (): Promise<void> => undefined;
     await step("Database", async () => {
       const database = await startDatabase(settings.databaseUrl, { init });
       close = () => database.close();

@@ -6,6 +6,7 @@ export interface RawAnswer {
   /** Names in lower case; of repeated ones the last. */
   readonly headers: ReadonlyMap<string, string>;
   readonly body: string;
+  readonly bodyBytes: Buffer;
   /** Everything that came. */
   readonly bytes: Buffer;
   /** Whether the server closed the connection. */
@@ -70,18 +71,34 @@ function parseAnswer(bytes: Buffer, closed: boolean): RawAnswer {
       return [line.slice(0, at).toLowerCase(), line.slice(at + 1).trim()];
     }),
   );
+  const bodyBytes = end < 0 ? Buffer.alloc(0) : bytes.subarray(end + 4);
+  const whole = headers.get("transfer-encoding") === "chunked" ? withoutChunks(bodyBytes) : bodyBytes;
   return {
     status: Number(/^HTTP\/1\.1 (\d{3})/.exec(first)?.[1] ?? 0),
     headers,
-    body: end < 0 ? "" : bytes.subarray(end + 4).toString("utf8"),
+    body: whole.toString("utf8"),
+    bodyBytes: whole,
     bytes,
     closed,
   };
 }
 
 function isComplete(bytes: Buffer): boolean {
+  if (!bytes.includes("\r\n\r\n")) return false;
   const answer = parseAnswer(bytes, false);
   const length = answer.headers.get("content-length");
-  if (length !== undefined) return Buffer.byteLength(answer.body) >= Number(length);
-  return answer.headers.get("transfer-encoding") === "chunked" && answer.body.endsWith("0\r\n\r\n");
+  if (answer.status === 304 || answer.status === 204) return true;
+  if (length !== undefined) return answer.bodyBytes.length >= Number(length);
+  return answer.headers.get("transfer-encoding") === "chunked" && bytes.subarray(-5).toString() === "0\r\n\r\n";
+}
+
+function withoutChunks(bytes: Buffer): Buffer {
+  const parts: Buffer[] = [];
+  for (let at = 0; ;) {
+    const lineEnd = bytes.indexOf("\r\n", at);
+    const length = lineEnd < 0 ? 0 : parseInt(bytes.subarray(at, lineEnd).toString("latin1"), 16);
+    if (!(length > 0)) return Buffer.concat(parts);
+    parts.push(bytes.subarray(lineEnd + 2, lineEnd + 2 + length));
+    at = lineEnd + 2 + length + 2;
+  }
 }
