@@ -1,20 +1,15 @@
 /** The answer to a look-up: values, spread, notes, curves, thickness. Pure: server page, exports and island share it. */
 import {
-  type ComparedRow,
-  compareTabulations,
   constantsAtRow,
   constantsOverEnergy,
-  type ConstantsNote,
   type ConstantsOverEnergy,
   DEFAULT_TABULATION,
   type Edge,
   edgesOf,
   electronDensityPerM3,
   energiesForTransmission,
-  FREE_ATOM_LIMIT_EV,
   kevFromEv,
   missingElements,
-  nearestEdgeInBand,
   type OpticalConstants,
   pairContrast,
   type PairContrast,
@@ -30,6 +25,7 @@ import {
 import { parseEnergies, parseQuantity } from "#src/lib/quantities/index.ts";
 import type { MaterialFinder } from "./finder.ts";
 import type { Question } from "./question.ts";
+import { type ValueRow, valueRows } from "./values.ts";
 import {
   type FieldFault,
   inField,
@@ -43,15 +39,6 @@ import {
 export const MAX_MATERIALS = 8;
 export const MAX_LIST_ENERGIES = 2000;
 const CURVE_POINTS = 240;
-
-export interface ValueRow {
-  readonly energyEv: number;
-  readonly constants: OpticalConstants | null;
-  readonly byTabulation: ReadonlyMap<TabulationKey, OpticalConstants | null>;
-  readonly spread: Spread | null;
-  readonly notes: readonly ConstantsNote[];
-  readonly edgeNear: Edge | null;
-}
 
 export interface MaterialCurve {
   readonly columns: ConstantsOverEnergy;
@@ -154,7 +141,7 @@ export function answerQuestion(question: Question, tables: ScatteringTables, fin
     main,
     others: otherAnswers,
     edges,
-    list: stated ? valueRows(stated, listed, tables, tabulation) : [],
+    list: stated ? valueRows(stated.material, listed, tables, tabulation) : [],
     curveSpread: stated ? spreadOver(stated, grid, tables) : [],
     pair: pairContrast(main?.value?.constants ?? null, otherAnswers[0]?.value?.constants ?? null),
     pairCurve: stated && others[0] ? pairCurve(stated, others[0], range, tables, tabulation) : null,
@@ -162,28 +149,6 @@ export function answerQuestion(question: Question, tables: ScatteringTables, fin
   };
 }
 
-/** Values at energies (eV) with spread and notes. */
-export function valueRows(
-  stated: StatedMaterial,
-  energiesEv: readonly number[],
-  tables: ScatteringTables,
-  tabulation: TabulationKey,
-): ValueRow[] {
-  const allEdges = edgesOf(stated.material, tables, [0, Infinity]);
-  const rows: ComparedRow[] = compareTabulations(stated.material, energiesEv, tables, tabulation);
-  return rows.map((row, index) => {
-    const energyEv = energiesEv[index] as number;
-    const edgeNear = nearestEdgeInBand(allEdges, energyEv);
-    const notes: ConstantsNote[] = [];
-    if (edgeNear) notes.push("nearEdge");
-    if (energyEv < FREE_ATOM_LIMIT_EV) notes.push("belowOneKeV");
-    if (!row.constants) notes.push("notInTable");
-    if (stated.material.densityEstimated) notes.push("densityEstimated");
-    return { energyEv, ...row, notes, edgeNear };
-  });
-}
-
-/** Curves of both materials on one grid, so that their differences can be drawn. */
 function pairCurve(
   first: StatedMaterial,
   second: StatedMaterial,
@@ -214,7 +179,7 @@ function materialAnswer(
   return {
     stated,
     electronDensityPerM3: electronDensityPerM3(stated.material),
-    value: energyEv === null ? null : (valueRows(stated, [energyEv], tables, tabulation)[0] ?? null),
+    value: energyEv === null ? null : (valueRows(stated.material, [energyEv], tables, tabulation)[0] ?? null),
     curve: { columns, rows: grid.map((_, index) => constantsAtRow(columns, index)) },
     missing: missingElements(stated.material, tables, tabulation),
   };

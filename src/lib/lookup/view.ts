@@ -9,8 +9,9 @@ import {
   perCmFromPerM,
   type TabulationKey,
 } from "#src/lib/physics/index.ts";
-import type { Answer, MaterialAnswer, ThicknessAnswer, ValueRow } from "./answer.ts";
+import type { Answer, MaterialAnswer, ThicknessAnswer } from "./answer.ts";
 import type { FieldFault } from "./state-material.ts";
+import type { ValueRow } from "./values.ts";
 
 export interface ConstantsValues {
   readonly wavelengthAngstrom: number;

@@ -46,6 +46,13 @@ export interface ConstantsOverEnergy {
   readonly muEnergyAbsorptionPerM: Float64Array;
 }
 
+/**
+ * The data files of `henke93` and `chantler95` hold no f2 below 1e-6 electrons. Where EPDL97 says that f2 is that small (twice it,
+ * since the tables differ), its value stands in: hydrogen above some 8 keV gives under 0.1 % of any compound's β. A larger
+ * missing f2 stays missing.
+ */
+const NEGLIGIBLE_F2 = 2e-6;
+
 const TWO_PI = 2 * Math.PI;
 
 /** r_e λ²/(2π) in m², for a photon energy in eV. */
@@ -131,6 +138,8 @@ export function constantsOverEnergy(
         scatteringHint = factorsAt(scattering, energyEv, other, scatteringHint, logEnergies[i] as number);
         carrier = other;
       }
+      // Hydrogen and helium at hard energies: too weak for the older tables to hold, and too weak to matter which table it is.
+      if (Number.isNaN(own.f2) && carrier.f2 <= NEGLIGIBLE_F2) own.f2 = carrier.f2;
       const strength = atomsPerM3 * (prefactors[i] as number);
       columns.delta[i]! += strength * own.f1;
       columns.beta[i]! += strength * own.f2;

@@ -1,0 +1,153 @@
+/**
+ * The state of a look-up in the browser: the question is all there is; the answer is derived from it by the physics core with
+ * the tables of the elements it needs. Until those are here the served answer stands.
+ */
+import { useQueries, type UseQueryResult } from "@tanstack/react-query";
+import { useEffect, useMemo, useRef, useState } from "react";
+import { answerQuestion } from "#src/lib/lookup/answer.ts";
+import { type KnownMaterial, materialFinder, type MaterialFinder } from "#src/lib/lookup/finder.ts";
+import { type Question, writeQuestion } from "#src/lib/lookup/question.ts";
+import { readRecipe } from "#src/lib/lookup/recipe.ts";
+import { materialOfLine, QuestionError, statedMaterial } from "#src/lib/lookup/state-material.ts";
+import { type View, viewOf } from "#src/lib/lookup/view.ts";
+import { type LoadedElement, loadElement, type TableInfo, tablesOf } from "#src/lib/tables/load.client.ts";
+import { searchMaterials } from "./searchMaterials.ts";
+
+export interface LookupStart {
+  readonly question: Question;
+  readonly view: View;
+  readonly known: readonly KnownMaterial[];
+  readonly tables: TableInfo;
+}
+
+export interface Lookup {
+  readonly question: Question;
+  readonly view: View;
+  /** True while the view still answers an older question. */
+  readonly stale: boolean;
+  /** What stands in the way of an answer, in words. */
+  readonly trouble: string | null;
+  /** Kept materials that the browser has heard of. */
+  readonly known: readonly KnownMaterial[];
+  readonly change: (fields: Partial<Question>) => void;
+  readonly learn: (materials: readonly KnownMaterial[]) => void;
+}
+
+export function useLookup(start: LookupStart): Lookup {
+  const [question, setQuestion] = useState(start.question);
+  const [learnt, setLearnt] = useState<readonly KnownMaterial[]>(start.known);
+  const asked = useUnknownWords(question, learnt);
+  const known = useMemo(() => uniqueById([...learnt, ...asked.found]), [learnt, asked.found]);
+  const finder = useMemo(() => materialFinder(known), [known]);
+  const elements = useElements(question, finder, start.tables);
+  const ready = elements.loaded !== null && !asked.pending;
+
+  const latest = useRef({ question: start.question, view: start.view });
+  const view = useMemo(() => {
+    if (question === start.question && !elements.loaded) return start.view;
+    if (!ready || !elements.loaded) return latest.current.view;
+    return viewOf(answerQuestion(question, tablesOf(elements.loaded, start.tables), finder));
+  }, [question, ready, elements.loaded, finder, start]);
+  useEffect(() => {
+    latest.current = { question, view };
+  }, [question, view]);
+
+  useAddress(question, start.question);
+  return {
+    question,
+    view,
+    stale: !ready && question !== start.question,
+    trouble: elements.trouble ?? asked.trouble,
+    known,
+    change: (fields) => setQuestion((before) => ({ ...before, ...fields })),
+    learn: (materials) => setLearnt((before) => uniqueById([...before, ...materials])),
+  };
+}
+
+function uniqueById(materials: readonly KnownMaterial[]): KnownMaterial[] {
+  return [...new Map(materials.map((material) => [material.id, material])).values()];
+}
+
+/** Words of the question that may name a kept material not yet known here; asked once each. */
+function useUnknownWords(question: Question, known: readonly KnownMaterial[]) {
+  const words = useMemo(() => {
+    const finder = materialFinder(known);
+    const lines = question.with.split("\n").flatMap((line) => line.split(/[;\t]/).slice(0, 2));
+    const named =
+      question.parts.trim() === "" ? [question.material] : readRecipe(question.parts).map((line) => line.material);
+    return [...new Set([...named, ...lines].map((word) => word.trim()))].filter(
+      (word) => word.length >= 2 && word.length <= 64 && !finder.find(word),
+    );
+  }, [question.material, question.parts, question.with, known]);
+  return useQueries({
+    queries: words.map((word) => ({
+      queryKey: ["materials", word],
+      queryFn: ({ signal }: { signal: AbortSignal }) => searchMaterials(word, 8, signal),
+      staleTime: Infinity,
+    })),
+    combine: foundMaterials,
+  });
+}
+
+/** The elements of every material that can be read from the question. */
+function useElements(question: Question, finder: MaterialFinder, info: TableInfo) {
+  const atomicNumbers = useMemo(() => {
+    const found = new Set<number>();
+    const take = (read: () => { material: { massFractions: ReadonlyMap<number, number> } }): void => {
+      try {
+        for (const atomicNumber of read().material.massFractions.keys()) found.add(atomicNumber);
+      } catch (error) {
+        if (!(error instanceof QuestionError)) throw error;
+      }
+    };
+    take(() => statedMaterial(question, finder));
+    for (const line of question.with.split("\n"))
+      if (line.trim() !== "") take(() => materialOfLine(line.trim(), finder));
+    return [...found].sort((a, b) => a - b);
+  }, [question, finder]);
+  return useQueries({
+    queries: atomicNumbers.map((atomicNumber) => ({
+      queryKey: ["element", info.version, atomicNumber],
+      queryFn: ({ signal }: { signal: AbortSignal }) => loadElement(atomicNumber, info, signal),
+      staleTime: Infinity,
+      gcTime: Infinity,
+    })),
+    combine: loadedElements,
+  });
+}
+
+// Kept outside the hooks: react-query gives the same object back while the results are the same, so that answers are not
+// computed again for nothing.
+function foundMaterials(results: UseQueryResult<readonly KnownMaterial[]>[]) {
+  return {
+    found: results.flatMap((result) => result.data ?? []),
+    pending: results.some((result) => result.isPending),
+    trouble: results.some((result) => result.isError) ? "The handbook cannot be reached. Formulas still work." : null,
+  };
+}
+
+function loadedElements(results: UseQueryResult<LoadedElement>[]) {
+  const loaded = results.flatMap((result) => (result.data ? [result.data] : []));
+  return {
+    loaded: loaded.length === results.length ? loaded : null,
+    trouble: results.some((result) => result.isError)
+      ? "The tables did not arrive. The values below answer the question before; try again when the connection is back."
+      : null,
+  };
+}
+
+// Browsers slow pages down that write the address on every pointer move.
+const ADDRESS_DELAY_MS = 250;
+
+/** Keeps the address in step with the question, so that it can be copied at any time. */
+function useAddress(question: Question, first: Question): void {
+  useEffect(() => {
+    if (question === first) return;
+    const timer = setTimeout(() => {
+      const address = new URL(location.href);
+      address.search = writeQuestion(question).toString();
+      history.replaceState(history.state, "", address);
+    }, ADDRESS_DELAY_MS);
+    return () => clearTimeout(timer);
+  }, [question, first]);
+}

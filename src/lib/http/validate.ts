@@ -1,0 +1,128 @@
+/** Judging input by its schema, with faults that say what was given, what is accepted and how to mend it. */
+import type { z } from "zod";
+import { type InputFault, ProblemError, quoteInput } from "./problems.ts";
+
+/** The value as the schema gives it back. @throws ProblemError invalid, with one fault for each place */
+export function validate<T>(schema: z.ZodType<T>, value: unknown, what = "The input is not valid."): T {
+  const result = schema.safeParse(value);
+  if (result.success) return result.data;
+  throw new ProblemError("invalid", what, { errors: faultsOf(result.error.issues, value, []).slice(0, MAX_FAULTS) });
+}
+
+const MAX_FAULTS = 20;
+
+type Issue = z.core.$ZodIssue;
+
+function faultsOf(issues: readonly Issue[], root: unknown, prefix: readonly PropertyKey[]): InputFault[] {
+  return issues.flatMap((issue) => {
+    const path = [...prefix, ...issue.path];
+    if (issue.code === "invalid_union") return unionFaults(issue, root, path);
+    if (issue.code === "unrecognized_keys") {
+      return issue.keys.map((key) => ({
+        path: pointer([...path, key]),
+        code: "unknownKey",
+        message: `“${quoteInput(key, 40)}” is not a key that is read here. Remove it, or see /api/v1/openapi.json for the ones that are.`,
+      }));
+    }
+    return [{ path: pointer(path), code: codeOf(issue), message: messageOf(issue, at(root, path)) }];
+  });
+}
+
+const pointer = (path: readonly PropertyKey[]): string =>
+  path.map((part) => `/${String(part).replace(/~/g, "~0").replace(/\//g, "~1").slice(0, 64)}`).join("");
+
+function at(root: unknown, path: readonly PropertyKey[]): unknown {
+  return path.reduce<unknown>(
+    (value, part) =>
+      value !== null && typeof value === "object" && Object.hasOwn(value, part)
+        ? (value as Record<PropertyKey, unknown>)[part]
+        : undefined,
+    root,
+  );
+}
+
+/**
+ * Of several accepted forms, the faults of the one that was meant: the form whose own keys the value has. Zod's branches come
+ * in the order of the schema; the one with the fewest unknown and missing keys is nearest.
+ */
+function unionFaults(
+  issue: Extract<Issue, { code: "invalid_union" }>,
+  root: unknown,
+  path: readonly PropertyKey[],
+): InputFault[] {
+  const value = at(root, path);
+  const branches = issue.errors.filter((branch) => branch.length > 0);
+  if (value === null || typeof value !== "object" || branches.length === 0) {
+    return [
+      {
+        path: pointer(path),
+        code: value === undefined ? "missing" : "wrongType",
+        message: `${given(value)}. One of the forms in /api/v1/openapi.json is accepted here.`,
+      },
+    ];
+  }
+  const cost = (branch: readonly Issue[]): number =>
+    branch.reduce((sum, each) => {
+      if (each.path.length > 0 && each.code !== "invalid_type") return sum;
+      if (each.code === "unrecognized_keys") return sum + 10 * each.keys.length;
+      if (each.code === "invalid_type" && each.path.length === 1 && at(value, each.path) === undefined) return sum + 11;
+      return sum + (each.path.length === 0 ? 20 : 1);
+    }, 0);
+  const nearest = branches.reduce((best, branch) => (cost(branch) < cost(best) ? branch : best));
+  return faultsOf(nearest, root, path);
+}
+
+function codeOf(issue: Issue): string {
+  switch (issue.code) {
+    case "invalid_type":
+      return "wrongType";
+    case "too_small":
+      return "tooSmall";
+    case "too_big":
+      return issue.origin === "string" || issue.origin === "array" ? "tooLong" : "tooLarge";
+    case "invalid_value":
+      return "notAChoice";
+    case "invalid_format":
+      return "wrongFormat";
+    case "custom":
+      return (issue.params?.["code"] as string | undefined) ?? "invalid";
+    default:
+      return "invalid";
+  }
+}
+
+function given(value: unknown): string {
+  if (value === undefined) return "Nothing was given";
+  if (value === null) return "null was given";
+  if (typeof value === "string") return `The text “${quoteInput(value, 40)}” was given`;
+  if (typeof value === "number" || typeof value === "boolean") return `${String(value)} was given`;
+  return Array.isArray(value) ? "A list was given" : "An object was given";
+}
+
+const TYPE_WORDS: Readonly<Record<string, string>> = {
+  number: "a number",
+  string: "a text",
+  array: "a list",
+  object: "an object",
+  boolean: "true or false",
+  int: "a whole number",
+};
+
+function messageOf(issue: Issue, value: unknown): string {
+  switch (issue.code) {
+    case "invalid_type":
+      return `${given(value)}; ${TYPE_WORDS[issue.expected] ?? issue.expected} is needed.${typeof value === "string" && issue.expected === "number" ? " Send it as a JSON number, without quotes." : ""}`;
+    case "too_small":
+      if (issue.origin === "string" || issue.origin === "array")
+        return `At least ${String(issue.minimum)} ${issue.origin === "string" ? "characters are" : "entries are"} needed.`;
+      return `${given(value)}; ${issue.inclusive ? "at least" : "more than"} ${String(issue.minimum)} is accepted.`;
+    case "too_big":
+      if (issue.origin === "string" || issue.origin === "array")
+        return `More than ${String(issue.maximum)} ${issue.origin === "string" ? "characters" : "entries"} were given; the limit is ${String(issue.maximum)}.`;
+      return `${given(value)}; ${issue.inclusive ? "at most" : "less than"} ${String(issue.maximum)} is accepted.`;
+    case "invalid_value":
+      return `${given(value)}; accepted are ${issue.values.map(String).join(", ")}.`;
+    default:
+      return issue.message;
+  }
+}
