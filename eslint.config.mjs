@@ -14,6 +14,7 @@ const ISLANDS = [
   "lib/quantities",
   "lib/materials",
   "lib/tables/load.client.ts",
+  "lib/tables/info.ts",
   "lib/workers",
   "lib/http/problems.ts",
   "styles",
@@ -40,14 +41,16 @@ const MAY_IMPORT = {
     "lib/quantities",
     "lib/materials",
     "lib/tables/load.client.ts",
+    "lib/tables/info.ts",
   ],
-  "lib/workers": ["lib/physics", "lib/tables/load.client.ts"],
+  "lib/workers": ["lib/physics", "lib/tables/load.client.ts", "lib/tables/info.ts"],
   // elements.ts is data that is seeded; physics functions stay out of the database layer.
   db: ["lib/schemas", "lib/physics/elements.ts"],
   "lib/services": [
     "db",
     "lib/physics",
     "lib/tables/load.server.ts",
+    "lib/tables/info.ts",
     "lib/schemas",
     "lib/materials",
     "lib/quantities",
@@ -82,7 +85,7 @@ export default defineConfig(
       "import-x/parsers": { "@typescript-eslint/parser": [".ts", ".tsx", ".astro"] },
     },
     rules: {
-      eqeqeq: "error",
+      eqeqeq: ["error", "always", { null: "ignore" }],
       "@typescript-eslint/consistent-type-imports": ["error", { fixStyle: "inline-type-imports" }],
       "@typescript-eslint/no-unused-vars": [
         "error",

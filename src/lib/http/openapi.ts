@@ -8,7 +8,7 @@ import {
   tabulationSchema,
 } from "#src/lib/schemas/constants.ts";
 import { materialItemSchema, materialsListSchema } from "#src/lib/schemas/materials-list.ts";
-import { healthSchema, problemSchema } from "#src/lib/schemas/problem.ts";
+import { healthSchema, problemSchema } from "./problem-schema.ts";
 
 type Place = "query" | "path";
 

@@ -13,11 +13,17 @@ export interface MaterialFinder {
   /** Materials of exactly that formula, for an offer of densities. */
   ofFormula(formula: string): readonly KnownMaterial[];
   readonly lookup: MaterialLookup;
+  /** Materials spelt nearly so, best first, for an offer. */
+  near(words: string): readonly KnownMaterial[];
 }
 
 const fold = (words: string): string => words.normalize("NFKD").replace(/\p{M}/gu, "").toLowerCase().trim();
 
-export function materialFinder(known: Iterable<KnownMaterial>): MaterialFinder {
+/** @param near fuzzy search, which belongs to whoever has the whole handbook at hand */
+export function materialFinder(
+  known: Iterable<KnownMaterial>,
+  near: (words: string) => readonly KnownMaterial[] = () => [],
+): MaterialFinder {
   const byId = new Map<string, KnownMaterial>();
   const byWords = new Map<string, KnownMaterial>();
   const byFormula = new Map<string, KnownMaterial[]>();
@@ -40,5 +46,6 @@ export function materialFinder(known: Iterable<KnownMaterial>): MaterialFinder {
     find: (words) => byWords.get(fold(words)) ?? null,
     ofFormula: (formula) => byFormula.get(formula) ?? [],
     lookup: (materialId) => byId.get(materialId) ?? null,
+    near,
   };
 }

@@ -37,7 +37,17 @@ export function inField<T>(field: QuestionField, read: () => T): T {
   try {
     return read();
   } catch (error) {
-    if (error instanceof QuestionError) throw error;
+    if (error instanceof QuestionError) {
+      // What is wrong with a part or a further material is mended where that is written; its offers do not fit there.
+      if (error.fault.field !== "material" || field === "material") throw error;
+      throw new QuestionError(
+        field,
+        error.message.replace(
+          ". Did you mean one of these?",
+          `. Near it: ${error.fault.suggestions.map(({ words }) => words).join(", ")}.`,
+        ),
+      );
+    }
     if (error instanceof FormulaError || error instanceof StatementError) {
       throw new QuestionError(field, error.message, {
         position: error.position,
@@ -72,8 +82,35 @@ export function partOfWords(
     if (density === undefined || density === kept.densityGCm3) return { materialId: kept.id };
     return { components: [{ materialId: kept.id, fraction: 1 }], basis: "mass", densityGCm3: density };
   }
-  const formula = parseFormula(words).text;
+  const formula = formulaOfWords(words, finder);
   return density === undefined ? { formula } : { formula, densityGCm3: density };
+}
+
+/** Words that are no known name are a formula; where they do not look like one, the names spelt nearly so are offered. */
+function formulaOfWords(words: string, finder: MaterialFinder): string {
+  try {
+    return parseFormula(words).text;
+  } catch (error) {
+    if (!(error instanceof FormulaError) || looksLikeFormula(words)) throw error;
+    const near = finder.near(words).slice(0, NEAR_NAMES);
+    throw new QuestionError(
+      "material",
+      `No material is called “${words.slice(0, 40)}”, and it is not a formula either${near.length > 0 ? ". Did you mean one of these?" : ": write one such as SiO2."}`,
+      {
+        suggestions: [
+          ...near.map(({ id, name }) => ({ text: id, words: name })),
+          ...error.suggestions.map((text) => ({ text, words: text })),
+        ].slice(0, NEAR_NAMES),
+      },
+    );
+  }
+}
+
+const NEAR_NAMES = 4;
+
+/** A capital or a bracket first, and a digit, a bracket or only few letters: then the fault is one of spelling a formula. */
+export function looksLikeFormula(words: string): boolean {
+  return /^[A-Z([]/.test(words) && !/\s/.test(words.trim()) && (/[0-9()[\]·]/.test(words) || words.length <= 4);
 }
 
 /** The question's main material. @throws QuestionError */

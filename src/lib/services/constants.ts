@@ -120,7 +120,12 @@ export async function computeBatch<Refusal>(
 }
 
 /** The tabulated factors of one element. @throws ProblemError notFound */
-export function elementFactors(symbol: string, tabulation: TabulationKey, tables: ScatteringTables): FactorsAnswer {
+export function elementFactors(
+  symbol: string,
+  asked: TabulationKey | undefined,
+  tables: ScatteringTables,
+): FactorsAnswer {
+  const tabulation = asked ?? DEFAULT_TABULATION;
   const element = elementBySymbol(symbol);
   const factors = element && tables.tabulations[tabulation].elements.get(element.atomicNumber);
   if (!element || !factors) {

@@ -5,9 +5,8 @@ import { type Question, readQuestion } from "#src/lib/lookup/question.ts";
 import { readRecipe } from "#src/lib/lookup/recipe.ts";
 import { type View, viewOf } from "#src/lib/lookup/view.ts";
 import type { MaterialLookup } from "#src/lib/materials/resolve.ts";
-import { TABULATION_KEYS, type ScatteringTables } from "#src/lib/physics/index.ts";
-import type { TableInfo } from "#src/lib/tables/load.client.ts";
-import { allMaterials } from "./materials.ts";
+import { tableInfo, type TableInfo } from "#src/lib/tables/info.ts";
+import { allMaterials, searchMaterials } from "./materials.ts";
 import { getTables } from "./tables.ts";
 
 export interface LookupPage {
@@ -31,7 +30,7 @@ let finder: MaterialFinder | null = null;
 
 /** Made once: the handbook does not change while the process runs. */
 export function handbookFinder(): MaterialFinder {
-  finder ??= materialFinder(allMaterials());
+  finder ??= materialFinder(allMaterials(), searchMaterials);
   return finder;
 }
 
@@ -67,18 +66,5 @@ function slim({
     massFractions: formula === null ? massFractions : null,
     densityGCm3,
     densityUncertaintyPercent,
-  };
-}
-
-function tableInfo(tables: ScatteringTables): TableInfo {
-  const each = <T>(read: (key: (typeof TABULATION_KEYS)[number]) => T) => ({
-    epdl97: read("epdl97"),
-    henke93: read("henke93"),
-    chantler95: read("chantler95"),
-  });
-  return {
-    version: tables.version,
-    rangeEv: each((key) => tables.tabulations[key].rangeEv),
-    elements: each((key) => [...tables.tabulations[key].elements.keys()]),
   };
 }

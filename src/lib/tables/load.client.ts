@@ -13,14 +13,7 @@ import {
   type Tabulation,
   type TabulationKey,
 } from "#src/lib/physics/index.ts";
-
-/** What the page hands over about the tables, so that the browser asks only for what exists. */
-export interface TableInfo {
-  readonly version: string;
-  readonly rangeEv: Readonly<Record<TabulationKey, readonly [number, number]>>;
-  /** Atomic numbers in each tabulation. */
-  readonly elements: Readonly<Record<TabulationKey, readonly number[]>>;
-}
+import type { TableInfo } from "./info.ts";
 
 /** The part of `GET /elements/{symbol}/factors` that is used here. */
 interface FactorsAnswer {

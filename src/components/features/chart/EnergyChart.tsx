@@ -285,6 +285,9 @@ function EdgeMarks(props: {
   );
 }
 
+/** Width of a letter of a name, px: a guess that leaves room. */
+const LETTER_WIDTH = 7.5;
+
 function EndNames(props: {
   curves: readonly ChartCurve[];
   toX: (keV: number) => number;
@@ -294,16 +297,25 @@ function EndNames(props: {
   narrow: boolean;
 }) {
   const ends = props.curves.flatMap((curve) => {
-    const last = curve.values.findLastIndex((value) => value !== null);
+    const last = curve.values.findLastIndex((value) => value !== null && value !== 0);
     const value = curve.values[last];
     const energyKeV = curve.energiesKeV[last];
-    return value == null || value === 0 || energyKeV === undefined
-      ? []
-      : [{ curve, x: props.toX(energyKeV), y: props.toY(Math.abs(value)) }];
+    if (value == null || energyKeV === undefined) return [];
+    const x = props.toX(energyKeV);
+    const y = props.toY(Math.abs(value));
+    // On a narrow chart the name stands above its line: above the highest point the line has below the name.
+    const start = x - (curve.name.length + curve.word.length + 1) * LETTER_WIDTH;
+    const highest = curve.values.reduce<number>(
+      (top, each, index) =>
+        each !== null && each !== 0 && props.toX(curve.energiesKeV[index] ?? 0) >= start
+          ? Math.min(top, props.toY(Math.abs(each)))
+          : top,
+      y,
+    );
+    return [{ curve, x, y: props.narrow ? highest - 9 : y + 4 }];
   });
-  const offset = props.narrow ? -14 : 4;
   const ys = spreadLabels(
-    ends.map(({ y }) => y + offset),
+    ends.map(({ y }) => y),
     17,
     props.frame.top + 10,
     props.bottom - 2,

@@ -1,10 +1,11 @@
 /** How far the tables part at the energy, and values at a list of energies. */
+import { Quantity } from "#src/components/ui/Quantity.tsx";
 import { Mark } from "#src/components/ui/Mark.tsx";
-import { formatGiven, formatPercent, formatSignedPercent, significantText } from "#src/lib/format/numbers.ts";
+import { formatGiven, formatPercent, formatSignedPercent } from "#src/lib/format/numbers.ts";
 import { methodHref } from "#src/lib/format/method-links.ts";
 import { TABULATION_NAMES } from "#src/lib/format/tabulations.ts";
 import type { Technique } from "#src/lib/format/quantities.ts";
-import type { RowView } from "#src/lib/lookup/view.ts";
+import type { ConstantsValues, RowView } from "#src/lib/lookup/view.ts";
 import type { TabulationKey } from "#src/lib/physics/index.ts";
 import { spreadShare } from "./AnswerSection.tsx";
 import { CommitField } from "./CommitField.tsx";
@@ -151,52 +152,53 @@ export function ListSection({ lookup }: { lookup: Lookup }) {
 
 const LONG_LIST = 60;
 
+/** Columns of the list; on a phone the first four stand. */
+const LIST_COLUMNS = [
+  { head: "δ", pick: (values: ConstantsValues) => values.delta, phone: true },
+  { head: "β", pick: (values: ConstantsValues) => values.beta, phone: true },
+  { head: "μ, cm⁻¹", pick: (values: ConstantsValues) => values.muTotalPerCm, phone: true },
+  { head: "1/μ, mm", pick: (values: ConstantsValues) => values.attenuationLengthMm, phone: false },
+  { head: "μ_en, cm⁻¹", pick: (values: ConstantsValues) => values.muEnergyAbsorptionPerCm, phone: false },
+  { head: "δ/β", pick: (values: ConstantsValues) => values.deltaOverBeta, phone: false },
+] as const;
+
 function ListTable({ rows }: { rows: readonly RowView[] }) {
   const shown = rows.slice(0, LONG_LIST);
   return (
-    <div className="scroll" tabIndex={0} role="region" aria-label="Values at the listed energies">
-      <table className="list list-tight list-flow">
+    <div>
+      <table className="list list-tight list-keep">
         <caption className="sr-only">Values at the listed energies</caption>
         <thead>
           <tr>
-            {["keV", "δ", "β", "μ, cm⁻¹", "1/μ, mm", "μ_en, cm⁻¹", "δ/β", "Notes"].map((head) => (
-              <th key={head} scope="col" className={head === "Notes" ? undefined : "num"}>
-                {head}
+            <th scope="col" className="num">
+              keV
+            </th>
+            {LIST_COLUMNS.map(({ head, phone }) => (
+              <th key={head} scope="col" className={phone ? "num" : "num wide-only"}>
+                {head === "μ_en, cm⁻¹" ? (
+                  <>
+                    μ<sub>en</sub>, cm⁻¹
+                  </>
+                ) : (
+                  head
+                )}
               </th>
             ))}
+            <th scope="col" className="wide-only">
+              Notes
+            </th>
           </tr>
         </thead>
         <tbody>
           {shown.map((row, index) => (
             <tr key={index}>
               <td className="num">{formatGiven(row.energyKeV)}</td>
-              <td className="num" data-label="δ">
-                {significantText(row.values?.delta ?? null)}
-              </td>
-              <td className="num" data-label="β">
-                {significantText(row.values?.beta ?? null)}
-              </td>
-              <td className="num" data-label="μ, cm⁻¹">
-                {significantText(row.values?.muTotalPerCm ?? null)}
-              </td>
-              <td className="num" data-label="1/μ, mm">
-                {significantText(row.values?.attenuationLengthMm ?? null)}
-              </td>
-              <td className="num" data-label="μ_en, cm⁻¹">
-                {significantText(row.values?.muEnergyAbsorptionPerCm ?? null)}
-              </td>
-              <td className="num" data-label="δ/β">
-                {significantText(row.values?.deltaOverBeta ?? null)}
-              </td>
-              <td data-label="Notes">
-                {row.edgeNear
-                  ? `near ${row.edgeNear.element} ${row.edgeNear.shell}`
-                  : row.notes.includes("belowOneKeV")
-                    ? "below 1 keV"
-                    : row.values
-                      ? ""
-                      : "not in the table"}
-              </td>
+              {LIST_COLUMNS.map(({ head, pick, phone }) => (
+                <td key={head} className={phone ? "num" : "num wide-only"}>
+                  <Quantity value={row.values ? pick(row.values) : null} missing={row.values ? "none" : "no value"} />
+                </td>
+              ))}
+              <td className="wide-only">{noteWords(row)}</td>
             </tr>
           ))}
         </tbody>
@@ -206,4 +208,10 @@ function ListTable({ rows }: { rows: readonly RowView[] }) {
       ) : null}
     </div>
   );
+}
+
+function noteWords(row: RowView): string {
+  if (row.edgeNear) return `near ${row.edgeNear.element} ${row.edgeNear.shell}`;
+  if (row.notes.includes("belowOneKeV")) return "below 1 keV";
+  return row.values ? "" : "not in the table";
 }

@@ -74,7 +74,7 @@ export function BlankPanel({
       <form
         ref={panel}
         id={panelId(field)}
-        className={`panel panel-hang panel-sheet${wide ? "panel-medium" : ""}`}
+        className={wide ? "panel panel-medium panel-hang panel-sheet" : "panel panel-hang panel-sheet"}
         role="dialog"
         aria-labelledby={headingId}
         onSubmit={(event) => {

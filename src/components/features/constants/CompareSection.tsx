@@ -1,5 +1,6 @@
 /** Further materials beside the main one, and what sets the first two apart. */
 import { useState } from "react";
+import { Quantity } from "#src/components/ui/Quantity.tsx";
 import { Mark } from "#src/components/ui/Mark.tsx";
 import { formatGiven, significantText } from "#src/lib/format/numbers.ts";
 import { methodHref } from "#src/lib/format/method-links.ts";
@@ -141,19 +142,19 @@ function MaterialsTable({ view, onRemove }: { view: View; onRemove: (index: numb
                 data-label="g/cm³"
               >{`${formatGiven(material.densityGCm3, 5)}${material.densityEstimated ? " (estimate)" : ""}`}</td>
               <td className="num" data-label="δ">
-                {significantText(values?.delta ?? null)}
+                <Quantity value={values?.delta ?? null} />
               </td>
               <td className="num" data-label="β">
-                {significantText(values?.beta ?? null)}
+                <Quantity value={values?.beta ?? null} />
               </td>
               <td className="num" data-label="μ, cm⁻¹">
-                {significantText(values?.muTotalPerCm ?? null)}
+                <Quantity value={values?.muTotalPerCm ?? null} />
               </td>
               <td className="num" data-label="1/μ, mm">
-                {significantText(values?.attenuationLengthMm ?? null)}
+                <Quantity value={values?.attenuationLengthMm ?? null} />
               </td>
               <td className="num" data-label="δ/β">
-                {significantText(values?.deltaOverBeta ?? null)}
+                <Quantity value={values?.deltaOverBeta ?? null} />
               </td>
               <td className="needs-script">
                 {index > 0 ? (

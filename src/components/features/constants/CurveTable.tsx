@@ -1,6 +1,7 @@
 /** The table beside a chart: every point drawn, read in steps so that it stays short enough to read. */
-import type { ChartCurve } from "#src/components/features/chart/EnergyChart.tsx";
-import { formatGiven, significantText } from "#src/lib/format/numbers.ts";
+import { type ChartCurve, valueAt } from "#src/components/features/chart/EnergyChart.tsx";
+import { Quantity } from "#src/components/ui/Quantity.tsx";
+import { formatGiven } from "#src/lib/format/numbers.ts";
 
 const ROWS = 24;
 
@@ -33,11 +34,7 @@ export function CurveTable({ curves }: { curves: readonly ChartCurve[] }) {
                 <td className="num">{formatGiven(first.energiesKeV[index] ?? 0, 5)}</td>
                 {curves.map((curve) => (
                   <td key={curve.key} className="num">
-                    {significantText(
-                      curve.energiesKeV[index] === first.energiesKeV[index]
-                        ? (curve.values[index] ?? null)
-                        : valueNear(curve, first.energiesKeV[index] ?? 0),
-                    )}
+                    <Quantity value={valueAt(curve, first.energiesKeV[index] ?? 0)} />
                   </td>
                 ))}
               </tr>
@@ -47,10 +44,4 @@ export function CurveTable({ curves }: { curves: readonly ChartCurve[] }) {
       </div>
     </details>
   );
-}
-
-/** Curves of several materials have their own edges, so their own points: the last at or below the energy. */
-function valueNear(curve: ChartCurve, energyKeV: number): number | null {
-  const index = curve.energiesKeV.findLastIndex((energy) => energy <= energyKeV);
-  return curve.values[index] ?? null;
 }

@@ -93,7 +93,7 @@ export function CurvesSection({ lookup }: { lookup: Lookup }) {
             )}
           />
         </div>
-        <p className="note">
+        <p className="note chart-note">
           {`Dotted upright lines: absorption edges.${strip ? " Lower strip: largest difference between tables, as a share of the value." : ""}${curves.some((curve) => curve.values.some((value) => value !== null && value < 0)) ? " Dotted stretches of a curve: negative, drawn by size." : ""}`}
         </p>
         <p className="row">

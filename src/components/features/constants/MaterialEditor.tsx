@@ -7,6 +7,7 @@ import { formatGiven } from "#src/lib/format/numbers.ts";
 import { compositionOfFormula, elementByNumber, FormulaError, parseFormula } from "#src/lib/physics/index.ts";
 import type { KnownMaterial } from "#src/lib/lookup/finder.ts";
 import type { Question } from "#src/lib/lookup/question.ts";
+import { looksLikeFormula } from "#src/lib/lookup/state-material.ts";
 import { BlankPanel } from "./Blank.tsx";
 import { MaterialCombobox } from "./MaterialCombobox.tsx";
 import type { Lookup } from "./useLookup.ts";
@@ -39,7 +40,7 @@ export function MaterialEditor({ lookup, onTake, onClose }: Props) {
       <MaterialCombobox
         label="Name or formula"
         value={text}
-        invalid={reading !== null && "error" in reading && reading.error.code !== "letterCase"}
+        invalid={reading !== null && "error" in reading && looksLikeFormula(text)}
         describedBy="material-reading"
         onChange={(next) => {
           setText(next);
@@ -55,6 +56,8 @@ export function MaterialEditor({ lookup, onTake, onClose }: Props) {
             As a formula: <Formula formula={reading.formula.text} />, {formatGiven(reading.formula.molarMassGPerMol, 6)}{" "}
             g/mol, {compositionText(fractionsOf(reading.formula.text), 4)}. Its density is asked next.
           </p>
+        ) : !looksLikeFormula(text) ? (
+          <p className="note">Not a formula. Choose from the list, or write one such as SiO2.</p>
         ) : (
           <div>
             <p className="note">As a formula:</p>

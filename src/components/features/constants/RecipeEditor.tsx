@@ -35,7 +35,7 @@ function startLines(question: Question, label: string | undefined): RecipeLine[]
 export function RecipeEditor({ lookup, onTake, onClose }: Props) {
   const { question } = lookup;
   const [lines, setLines] = useState(() =>
-    startLines(question, lookup.view.main?.keptId ?? lookup.view.main?.formula ?? undefined),
+    startLines(question, lookup.view.main?.keptId ? lookup.view.main.label : (lookup.view.main?.formula ?? undefined)),
   );
   const [by, setBy] = useState<MixtureBasisChoice>(question.by);
   const [density, setDensity] = useState(question.parts.trim() === "" ? "" : question.density);

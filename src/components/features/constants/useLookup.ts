@@ -10,7 +10,8 @@ import { type Question, writeQuestion } from "#src/lib/lookup/question.ts";
 import { readRecipe } from "#src/lib/lookup/recipe.ts";
 import { materialOfLine, QuestionError, statedMaterial } from "#src/lib/lookup/state-material.ts";
 import { type View, viewOf } from "#src/lib/lookup/view.ts";
-import { type LoadedElement, loadElement, type TableInfo, tablesOf } from "#src/lib/tables/load.client.ts";
+import type { TableInfo } from "#src/lib/tables/info.ts";
+import { type LoadedElement, loadElement, tablesOf } from "#src/lib/tables/load.client.ts";
 import { searchMaterials } from "./searchMaterials.ts";
 
 export interface LookupStart {
@@ -38,7 +39,8 @@ export function useLookup(start: LookupStart): Lookup {
   const [learnt, setLearnt] = useState<readonly KnownMaterial[]>(start.known);
   const asked = useUnknownWords(question, learnt);
   const known = useMemo(() => uniqueById([...learnt, ...asked.found]), [learnt, asked.found]);
-  const finder = useMemo(() => materialFinder(known), [known]);
+  const near = asked.near;
+  const finder = useMemo(() => materialFinder(known, (words) => near.get(words) ?? []), [known, near]);
   const elements = useElements(question, finder, start.tables);
   const ready = elements.loaded !== null && !asked.pending;
 
@@ -79,7 +81,7 @@ function useUnknownWords(question: Question, known: readonly KnownMaterial[]) {
       (word) => word.length >= 2 && word.length <= 64 && !finder.find(word),
     );
   }, [question.material, question.parts, question.with, known]);
-  return useQueries({
+  const answers = useQueries({
     queries: words.map((word) => ({
       queryKey: ["materials", word],
       queryFn: ({ signal }: { signal: AbortSignal }) => searchMaterials(word, 8, signal),
@@ -87,6 +89,11 @@ function useUnknownWords(question: Question, known: readonly KnownMaterial[]) {
     })),
     combine: foundMaterials,
   });
+  const near = useMemo(
+    () => new Map(words.map((word, index) => [word, answers.lists[index] ?? []])),
+    [words, answers.lists],
+  );
+  return { ...answers, near };
 }
 
 /** The elements of every material that can be read from the question. */
@@ -120,6 +127,7 @@ function useElements(question: Question, finder: MaterialFinder, info: TableInfo
 // computed again for nothing.
 function foundMaterials(results: UseQueryResult<readonly KnownMaterial[]>[]) {
   return {
+    lists: results.map((result) => result.data ?? []),
     found: results.flatMap((result) => result.data ?? []),
     pending: results.some((result) => result.isPending),
     trouble: results.some((result) => result.isError) ? "The handbook cannot be reached. Formulas still work." : null,

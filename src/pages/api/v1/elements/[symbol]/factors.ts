@@ -1,7 +1,6 @@
 /** `GET /api/v1/elements/{symbol}/factors`: one element's table; immutable where the address names its version. */
 import { apiRoute, otherMethods } from "#src/lib/http/handler.ts";
 import { ProblemError, quoteInput } from "#src/lib/http/problems.ts";
-import { DEFAULT_TABULATION } from "#src/lib/physics/index.ts";
 import { factorsQuerySchema } from "#src/lib/schemas/queries.ts";
 import { elementFactors } from "#src/lib/services/constants.ts";
 import { getTables } from "#src/lib/services/tables.ts";
@@ -9,7 +8,7 @@ import { getTables } from "#src/lib/services/tables.ts";
 export const GET = apiRoute({
   query: factorsQuerySchema,
   cache: ({ version }) => (version === undefined ? "revalidate" : "immutable"),
-  answer: async ({ query: { tabulation = DEFAULT_TABULATION, version }, params }) => {
+  answer: async ({ query: { tabulation, version }, params }) => {
     const tables = await getTables();
     if (version !== undefined && version !== tables.version) {
       throw new ProblemError(

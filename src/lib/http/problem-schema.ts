@@ -1,6 +1,6 @@
 /** Problem documents (RFC 9457) and the health answer, as schemas for the API's document and its tests. */
 import { z } from "zod";
-import { PROBLEM_KINDS, type ProblemCode } from "#src/lib/http/problems.ts";
+import { PROBLEM_KINDS, type ProblemCode } from "./problems.ts";
 
 export const problemSchema = z
   .strictObject({
