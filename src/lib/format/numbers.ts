@@ -66,8 +66,8 @@ export function partsText({ mantissa, exponent }: NumberParts): string {
  */
 export function formatGiven(value: number, digits: number = 6): string {
   const rounded = Number(value.toPrecision(digits));
-  const text = Math.abs(rounded) < 1e-6 ? rounded.toExponential() : rounded.toString();
-  return groupThousands(text.replace("-", MINUS));
+  if (rounded !== 0 && (Math.abs(rounded) < 1e-6 || Math.abs(rounded) >= 1e15)) return significantText(value, digits);
+  return groupThousands(String(rounded).replace("-", MINUS));
 }
 
 /** Fixed number of decimals, for columns that must align. */

@@ -1,6 +1,7 @@
 /** What each error code means and what to do, one plain sentence each. The types see to it that no code is missing. */
 import type { ProblemCode } from "#src/lib/http/problems.ts";
 import type { FormulaErrorCode, MaterialErrorCode } from "#src/lib/physics/index.ts";
+import type { QuantityErrorCode } from "#src/lib/quantities/index.ts";
 
 export interface Explanation {
   readonly means: string;
@@ -110,12 +111,10 @@ export const PROBLEM_EXPLANATIONS: Record<ProblemCode, Explanation> = {
   },
 };
 
-export const FORMULA_EXPLANATIONS: Record<FormulaErrorCode, Explanation> = {
-  empty: { means: "No formula was given.", remedy: "Write one, such as H2O or SiO2." },
-  tooLong: {
-    means: "The formula has more than 256 characters.",
-    remedy: "Write long mixtures as parts with shares.",
-  },
+/** Codes that more than one kind of field uses. */
+type SharedCode = "empty" | "tooLong";
+
+export const FORMULA_EXPLANATIONS: Record<Exclude<FormulaErrorCode, SharedCode>, Explanation> = {
   tooDeep: { means: "Brackets stand more than 8 deep.", remedy: "Multiply some of them out." },
   unknownElement: {
     means: "A symbol is not that of an element from H to Cf.",
@@ -157,7 +156,10 @@ export const FORMULA_EXPLANATIONS: Record<FormulaErrorCode, Explanation> = {
   },
 };
 
-export const MATERIAL_EXPLANATIONS: Record<MaterialErrorCode, Explanation> = {
+/** Codes of materials that only a request, not the core, can meet. */
+type StatementCode = "nestedTooDeep" | "materialNotFound" | "partRepeated";
+
+export const MATERIAL_EXPLANATIONS: Record<MaterialErrorCode | StatementCode, Explanation> = {
   noComponents: { means: "A mixture has no parts.", remedy: "Give at least one." },
   fractionNegative: { means: "A share is below 0.", remedy: "Shares are 0 or more." },
   fractionsAllZero: { means: "All shares are 0.", remedy: "Give each part its share." },
@@ -186,4 +188,104 @@ export const MATERIAL_EXPLANATIONS: Record<MaterialErrorCode, Explanation> = {
     remedy: "Give the share of the volume that is solid.",
   },
   vacuumInMixture: { means: "Vacuum was given as a part.", remedy: "Use a solid share below 1 for pores." },
+  nestedTooDeep: {
+    means: "Mixtures stand more than 5 deep inside each other.",
+    remedy: "Write the inner part as a formula or by its elements.",
+  },
+  materialNotFound: {
+    means: "No material has that id.",
+    remedy: "Look it up by name: the list of materials gives the id.",
+  },
+  partRepeated: { means: "A part stands twice in one mixture.", remedy: "Add its shares up into one part." },
+};
+
+/** Codes of single fields of a request that the schema, not a reader of quantities, finds. */
+type FieldCode =
+  | "unknownKey"
+  | "missing"
+  | "wrongType"
+  | "tooSmall"
+  | "tooLarge"
+  | "notAChoice"
+  | "wrongFormat"
+  | "invalid"
+  | "oneOf"
+  | "repeatedKey"
+  | "badCursor"
+  | "brokenText"
+  | "unsafeInteger"
+  | "tooFewPoints"
+  | "tooManyRows"
+  | "outsideTable";
+
+export const QUANTITY_EXPLANATIONS: Record<QuantityErrorCode | "outsideTable" | "tooFewPoints", Explanation> = {
+  empty: { means: "The field holds nothing.", remedy: "Write a value, such as 20 keV or H2O." },
+  tooLong: {
+    means: "The text or list is longer than the limit named; a formula has at most 256 characters.",
+    remedy: "Shorten it. Long mixtures are written as parts with shares.",
+  },
+  decimalComma: {
+    means: "A comma stands where a decimal point is meant.",
+    remedy: "Write 0.98, with a point. A comma separates two values.",
+  },
+  notANumber: { means: "The text is not a number.", remedy: "Write digits with at most one decimal point." },
+  foreignDigits: { means: "Digits of another script are not read.", remedy: "Write the digits 0 to 9." },
+  notFinite: { means: "The number is too large to be held.", remedy: "Check the power of ten." },
+  underflow: { means: "The number is so small that it would become 0.", remedy: "Check the power of ten." },
+  unknownUnit: {
+    means: "The unit is not one that is read here.",
+    remedy: "Use one of those the message names, or none: the field’s own unit is then taken.",
+  },
+  wrongDimension: {
+    means: "The unit measures something else, for example a length where a density is asked for.",
+    remedy: "Use a unit of the kind named.",
+  },
+  notPositive: { means: "The value must be above 0.", remedy: "Leave signs out, or correct the value." },
+  outOfRange: {
+    means: "The value lies outside what is accepted or covered.",
+    remedy: "Stay within the bounds named.",
+  },
+  outsideTable: {
+    means: "The energy lies outside the chosen table.",
+    remedy: "Stay within the bounds named, or choose a table that reaches further.",
+  },
+  rangeReversed: { means: "A range ends at or below its start.", remedy: "Write the smaller value first." },
+  stepNotPositive: { means: "The step of a range is not above 0.", remedy: "Write a step above 0." },
+  tooFewPoints: { means: "A range with two ends has a count below 2.", remedy: "Give a count of at least 2." },
+  tooMany: { means: "More values than the limit named.", remedy: "Take fewer, or a coarser range." },
+};
+
+export const FIELD_EXPLANATIONS: Record<Exclude<FieldCode, keyof typeof QUANTITY_EXPLANATIONS>, Explanation> = {
+  missing: { means: "A field that is needed is not there.", remedy: "Add it." },
+  unknownKey: {
+    means: "A key is not one that is read here, often a spelling mistake.",
+    remedy: "Correct or remove it. Nothing is ignored in silence.",
+  },
+  repeatedKey: { means: "A key stands twice.", remedy: "Keep one." },
+  wrongType: {
+    means: "The value is of another kind than asked for, for example text where a number stands.",
+    remedy: "Send numbers as JSON numbers, without quotes.",
+  },
+  tooSmall: { means: "A number or a list is below the least accepted.", remedy: "Stay at or above the bound named." },
+  tooLarge: { means: "A number is above the greatest accepted.", remedy: "Stay at or below the bound named." },
+  notAChoice: { means: "The value is not one of the choices.", remedy: "Take one of those the message lists." },
+  wrongFormat: { means: "The text does not have the form asked for.", remedy: "Follow the form the message gives." },
+  oneOf: {
+    means: "Two ways to name the material are given, or none.",
+    remedy: "Give formula with densityGCm3, or materialId.",
+  },
+  brokenText: { means: "The text holds half of a character.", remedy: "Send whole UTF-8." },
+  unsafeInteger: {
+    means: "A whole number has more digits than can be held exactly.",
+    remedy: "Send fewer digits.",
+  },
+  badCursor: {
+    means: "The cursor is not one that this list gave out.",
+    remedy: "Send nextCursor of the answer before, or leave it out.",
+  },
+  tooManyRows: {
+    means: "The items of a batch ask for more energies together than the limit named.",
+    remedy: "Send several batches.",
+  },
+  invalid: { means: "The value is not accepted for the reason named.", remedy: "Follow the message." },
 };

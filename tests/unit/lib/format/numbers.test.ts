@@ -69,6 +69,8 @@ describe("other numbers", () => {
     expect(formatGiven(33.1694, 4)).toBe("33.17");
     expect(formatGiven(20)).toBe("20");
     expect(formatGiven(0.1)).toBe("0.1");
+    expect(formatGiven(0)).toBe("0");
+    expect(formatGiven(2.5e-9, 2)).toBe(`2.5${SPACE}×${SPACE}10⁻⁹`);
     expect(formatGiven(-2500)).toBe(`\u22122${THIN}500`);
   });
   test("fixed decimals align columns, and nothing becomes minus zero", () => {
