@@ -29,7 +29,7 @@ try {
   say(error instanceof PlainError ? error.message : error.stack);
   counts.failed++;
 }
-say(`${counts.passed} passed, ${counts.failed} failed`);
+process.stdout.write(`${counts.passed} passed, ${counts.failed} failed\n`);
 process.exitCode = counts.failed === 0 ? 0 : 1;
 
 /** The browser of the browser tests. Root gets Debian's package; others are told the one line to run. */

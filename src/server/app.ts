@@ -19,7 +19,7 @@ import { policyFor, securityHeaders } from "./headers.ts";
 import { checkIdentity } from "./identity.ts";
 import { lookupLimits } from "./limits.ts";
 import { type Address, readAddress } from "./paths.ts";
-import { createShedding, MAX_DELAY_MS } from "./shedding.ts";
+import { createShedding, SHEDDING_LIMITS, type SheddingLimits } from "./shedding.ts";
 import { checkHost, checkOrigin, siteOf } from "./site.ts";
 import { staticFiles } from "./statics.ts";
 
@@ -51,8 +51,8 @@ export interface FrontOptions {
   readonly clientFolder: string | null;
   readonly log: FastifyBaseLogger;
   readonly timeouts?: Partial<Timeouts>;
-  /** Above this delay of timers requests are refused. */
-  readonly maxDelayMs?: number;
+  /** When requests are refused so that others are answered. */
+  readonly shedding?: SheddingLimits;
 }
 
 export interface Front {
@@ -97,7 +97,7 @@ export async function createFront(options: FrontOptions): Promise<Front> {
   guardServer(app, headers);
   const closeQuietConnections = trackConnections(app.server);
 
-  const shed = createShedding(app, options.maxDelayMs ?? MAX_DELAY_MS);
+  const shed = createShedding(app, options.shedding ?? SHEDDING_LIMITS);
   const limit = await lookupLimits(app, settings.limitsFactor);
   const files = options.clientFolder === null ? null : staticFiles(options.clientFolder);
   if (files !== null) await app.register(fastifyStatic, files.options);
@@ -122,7 +122,7 @@ export async function createFront(options: FrontOptions): Promise<Front> {
     checkRange(raw.headers.range);
     const { path } = request.address;
     if (closing) throw new ProblemError("notReady", "The site is stopping. Try again shortly.", retryAfter(5));
-    shed(path, files?.has(path) ?? false);
+    shed(reply.raw, path, files?.has(path) ?? false);
     checkBodyHeaders(raw, isApiPath(path));
     checkOrigin(raw, site);
     if (isApiPath(path)) checkIdentity(raw);

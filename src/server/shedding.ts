@@ -1,44 +1,49 @@
 /**
- * When the process cannot keep up, most requests are refused at once, so that the rest are answered. What tells is how
- * late timers fire: work here is synchronous, so requests in flight say nothing.
+ * When the process cannot keep up, requests are refused at once, so that the others are answered. Two things tell:
+ * how many are under way, since they share one thread, and how long the present turn of the event loop has lasted, since
+ * what arrives together may be handled in one turn, one after the other; who is reached late has waited too long.
  */
-import { monitorEventLoopDelay } from "node:perf_hooks";
+import type { ServerResponse } from "node:http";
 import type { FastifyInstance } from "fastify";
 import { ProblemError } from "#src/lib/http/problems.ts";
 
-/** Above this delay of timers, as a mean over a sample, requests are refused. */
-export const MAX_DELAY_MS = 100;
-/** Health and built files cost little and keep people informed: they go last, at this many times the delay. */
-const LAST = 10;
-const SAMPLE_MS = 250;
-const RESOLUTION_MS = 10;
+export interface SheddingLimits {
+  readonly underWay: number;
+  readonly turnMs: number;
+}
+
+/** Fifty busy connections fit in; pages of 5 ms then answer within 0.4 s. */
+export const SHEDDING_LIMITS: SheddingLimits = { underWay: 64, turnMs: 250 };
+/** Health and built files cost little and keep people informed: they go last, at this many times the limits. */
+const LAST = 4;
+const TICK_MS = 20;
 const HEALTH = "/api/v1/health";
 
 /** A check that throws the problem overloaded. */
-export function createShedding(app: FastifyInstance, maxDelayMs: number): (path: string, isFile: boolean) => void {
-  const delays = monitorEventLoopDelay({ resolution: RESOLUTION_MS });
-  delays.enable();
-  let delayMs = 0;
-  const timer = setInterval(() => {
-    // Without a sample nothing is known, and what was known stands.
-    if (delays.count > 0) delayMs = Math.max(0, delays.mean / 1e6 - RESOLUTION_MS);
-    delays.reset();
-  }, SAMPLE_MS);
-  timer.unref();
+export function createShedding(
+  app: FastifyInstance,
+  limits: SheddingLimits,
+): (response: ServerResponse, path: string, isFile: boolean) => void {
+  const underWay = new Set<ServerResponse>();
+  let turn = performance.now();
+  const begin = (): void => {
+    turn = performance.now();
+  };
+  const ticking = setInterval(begin, TICK_MS);
+  ticking.unref();
   // Starting up is long synchronous work, and no reason to refuse the first caller.
-  app.addHook("onListen", async () => {
-    delays.reset();
-    delayMs = 0;
-    timer.refresh();
-  });
-  app.addHook("onClose", async () => {
-    clearInterval(timer);
-    delays.disable();
-  });
-  return (path, isFile) => {
-    if (delayMs <= maxDelayMs * (isFile || path === HEALTH ? LAST : 1)) return;
-    throw new ProblemError("overloaded", "Too much is asked at once. Try again in a few seconds.", {
-      headers: { "retry-after": "2" },
-    });
+  app.addHook("onListen", async () => begin());
+  app.addHook("onClose", async () => clearInterval(ticking));
+  return (response, path, isFile) => {
+    const share = isFile || path === HEALTH ? LAST : 1;
+    const late = performance.now() - turn - TICK_MS;
+    if (late > limits.turnMs * share || underWay.size >= limits.underWay * share) {
+      throw new ProblemError("overloaded", "Too much is asked at once. Try again in a few seconds.", {
+        headers: { "retry-after": "2" },
+      });
+    }
+    underWay.add(response);
+    // "close" comes without "finish" where the caller went away.
+    for (const end of ["finish", "close"]) response.once(end, () => underWay.delete(response));
   };
 }

@@ -2,7 +2,7 @@
 import { afterEach, describe, expect, it, vi } from "vitest";
 import { LIMIT_GROUPS } from "#src/server/limits.ts";
 import { readAddress } from "#src/server/paths.ts";
-import { MAX_DELAY_MS } from "#src/server/shedding.ts";
+import { SHEDDING_LIMITS } from "#src/server/shedding.ts";
 import { echo, type RunningFront, startFront } from "#tests/support/front.ts";
 import { expectProblem } from "#tests/support/problems.ts";
 
@@ -125,7 +125,7 @@ describe("look-up limits", () => {
 describe("shedding", () => {
   it("refuses some with 503 and Retry-After while the process is behind, never health, and recovers", async () => {
     front = await startFront({
-      maxDelayMs: MAX_DELAY_MS,
+      shedding: SHEDDING_LIMITS,
       handler: async (request, response, next, locals) => {
         // Work here is synchronous, as rendering is.
         const end = performance.now() + (request.url === "/slow" ? 80 : 0);
@@ -145,7 +145,7 @@ describe("shedding", () => {
         await answer.text();
       }
     };
-    await Promise.all([...Array.from({ length: 6 }, () => keepAsking("/slow")), keepAsking("/api/v1/health")]);
+    await Promise.all([...Array.from({ length: 12 }, () => keepAsking("/slow")), keepAsking("/api/v1/health")]);
     expect([...statuses["/slow"]].sort()).toEqual([200, 503]);
     expect([...statuses["/api/v1/health"]]).toEqual([200]);
     expect(refused!.headers.get("retry-after")).toBe("2");
@@ -153,7 +153,32 @@ describe("shedding", () => {
       { status: 503, contentType: refused!.headers.get("content-type") ?? "", body: await refused!.text() },
       "overloaded",
     );
-    await new Promise((resolve) => setTimeout(resolve, 800));
+    await new Promise((resolve) => setTimeout(resolve, 100));
     expect((await fetch(`${baseUrl}/x`)).status).toBe(200);
+  });
+
+  it("refuses what comes above the number that may be under way, and makes room when callers go away", async () => {
+    let release = (): void => undefined;
+    const held = new Promise<void>((resolve) => (release = resolve));
+    front = await startFront({
+      shedding: { underWay: 3, turnMs: 60_000 },
+      handler: async (request, response, next, locals) => {
+        if (request.url === "/held") await held;
+        await echo(request, response, next, locals);
+      },
+    });
+    const { baseUrl } = front;
+    const leaving = new AbortController();
+    const asked = [1, 2].map(() => fetch(`${baseUrl}/held`).then((answer) => answer.status));
+    const left = fetch(`${baseUrl}/held`, { signal: leaving.signal }).catch(() => "left");
+    await new Promise((resolve) => setTimeout(resolve, 200));
+    expect((await fetch(`${baseUrl}/x`)).status).toBe(503);
+    expect((await fetch(`${baseUrl}/api/v1/health`)).status).toBe(200);
+    leaving.abort();
+    expect(await left).toBe("left");
+    await new Promise((resolve) => setTimeout(resolve, 100));
+    expect((await fetch(`${baseUrl}/x`)).status).toBe(200);
+    release();
+    expect(await Promise.all(asked)).toEqual([200, 200]);
   });
 });
