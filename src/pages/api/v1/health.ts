@@ -6,7 +6,11 @@ import { checkHealth } from "#src/lib/services/health.ts";
 export const GET: APIRoute = async ({ url, locals }) => {
   const health = await checkHealth();
   const headers = { "cache-control": "no-store" };
-  if (health.status === "ok") return Response.json(health, { headers });
+  if (health.status === "ok") {
+    return new Response(JSON.stringify(health), {
+      headers: { ...headers, "content-type": "application/json; charset=utf-8" },
+    });
+  }
   const problem = problemDocument("notReady", "The tables or the database do not answer. Try again shortly.", {
     path: url.pathname,
     requestId: locals.requestId,
