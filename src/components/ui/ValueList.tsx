@@ -25,7 +25,8 @@ export function ValueList({ items }: { items: readonly ValueItem[] }) {
         <div key={item.quantity}>
           <dt>
             <span>
-              <a href={methodHref(item.quantity)}>{QUANTITIES[item.quantity].name}</a>{" "}
+              <a href={methodHref(item.quantity)}>{QUANTITIES[item.quantity].name}</a>
+              {"\u00a0"}
               <Symbol quantity={item.quantity} />
             </span>
           </dt>

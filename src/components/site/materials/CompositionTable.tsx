@@ -1,6 +1,6 @@
 /** Elements of a material by mass, largest first, with a bar each. */
 import { ShareBar } from "#src/components/ui/ShareBar.tsx";
-import { formatPercent } from "#src/lib/format/numbers.ts";
+import { significantText } from "#src/lib/format/numbers.ts";
 import { elementBySymbol } from "#src/lib/physics/index.ts";
 
 export function CompositionTable({ massFractions }: { massFractions: readonly (readonly [string, number])[] }) {
@@ -24,7 +24,7 @@ export function CompositionTable({ massFractions }: { massFractions: readonly (r
           <tr key={symbol}>
             <td>{symbol}</td>
             <td>{elementBySymbol(symbol)?.name}</td>
-            <td className="num">{formatPercent(share, 4)}</td>
+            <td className="num">{`${significantText(share * 100)}\u00a0%`}</td>
             <td>
               <ShareBar share={share} />
             </td>
