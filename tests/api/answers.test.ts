@@ -162,4 +162,13 @@ describe("the running site", () => {
       );
     }
   });
+
+  it("names the methods that a route offers where another is asked for", async () => {
+    const answer = await fetch(`${inject("baseUrl")}/api/v1/health`, { method: "DELETE" });
+    expect(answer.headers.get("allow")).toBe("GET, HEAD");
+    expectProblem(
+      { status: answer.status, contentType: answer.headers.get("content-type") ?? "", body: await answer.text() },
+      "methodNotAllowed",
+    );
+  });
 });

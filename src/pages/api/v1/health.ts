@@ -1,4 +1,5 @@
 import type { APIRoute } from "astro";
+import { otherMethods } from "#src/lib/http/handler.ts";
 import { PROBLEM_TYPE, problemDocument } from "#src/lib/http/problems.ts";
 import { checkHealth } from "#src/lib/services/health.ts";
 
@@ -20,3 +21,5 @@ export const GET: APIRoute = async ({ url, locals }) => {
     headers: { ...headers, "content-type": PROBLEM_TYPE, "retry-after": "5" },
   });
 };
+
+export const ALL = otherMethods("GET");
