@@ -42,6 +42,9 @@ export interface InputFault {
   message: string;
 }
 
+/** Most faults that one answer tells. */
+export const MAX_FAULTS = 20;
+
 export interface ProblemDocument {
   type: string;
   title: string;
@@ -95,7 +98,8 @@ export function problemDocument(
 
 /** At most 64 characters of what came in, controls and invisible characters shown as spaces: safe to repeat in any message. */
 export function quoteInput(text: string, limit = 64): string {
-  const plain = text.replace(/[\p{Cc}\p{Cf}\p{Cs}]/gu, " ");
+  // Characters are one or two units; a long text costs no more than a short one.
+  const plain = text.slice(0, 2 * limit + 2).replace(/[\p{Cc}\p{Cf}\p{Cs}]/gu, " ");
   const characters = [...plain];
   return characters.length > limit ? `${characters.slice(0, limit - 1).join("")}…` : plain;
 }

@@ -1,6 +1,6 @@
 /** Judging input by its schema, with faults that say what was given, what is accepted and how to mend it. */
 import type { z } from "zod";
-import { type InputFault, ProblemError, quoteInput } from "./problems.ts";
+import { type InputFault, MAX_FAULTS, ProblemError, quoteInput } from "./problems.ts";
 
 /** The value as the schema gives it back. @throws ProblemError invalid, with one fault for each place */
 export function validate<T>(schema: z.ZodType<T>, value: unknown, what = "The input is not valid."): T {
@@ -9,8 +9,6 @@ export function validate<T>(schema: z.ZodType<T>, value: unknown, what = "The in
   throw new ProblemError("invalid", what, { errors: faultsOf(result.error.issues, value, []).slice(0, MAX_FAULTS) });
 }
 
-const MAX_FAULTS = 20;
-
 type Issue = z.core.$ZodIssue;
 
 function faultsOf(issues: readonly Issue[], root: unknown, prefix: readonly PropertyKey[]): InputFault[] {
@@ -18,14 +16,19 @@ function faultsOf(issues: readonly Issue[], root: unknown, prefix: readonly Prop
     const path = [...prefix, ...issue.path];
     if (issue.code === "invalid_union") return unionFaults(issue, root, path);
     if (issue.code === "unrecognized_keys") {
-      return issue.keys.map((key) => ({
+      return issue.keys.slice(0, MAX_FAULTS).map((key) => ({
         path: pointer([...path, key]),
         code: "unknownKey",
         message: `“${quoteInput(key, 40)}” is not a key that is read here. Remove it, or see /api/v1/openapi.json for the ones that are.`,
       }));
     }
-    return [{ path: pointer(path), code: codeOf(issue), message: messageOf(issue, at(root, path)) }];
+    return [faultOf(issue, path, at(root, path))];
   });
+}
+
+function faultOf(issue: Issue, path: readonly PropertyKey[], value: unknown): InputFault {
+  const missing = value === undefined && issue.code !== "custom";
+  return { path: pointer(path), code: missing ? "missing" : codeOf(issue), message: messageOf(issue, value) };
 }
 
 const pointer = (path: readonly PropertyKey[]): string =>
@@ -42,8 +45,8 @@ function at(root: unknown, path: readonly PropertyKey[]): unknown {
 }
 
 /**
- * Of several accepted forms, the faults of the one that was meant: the form whose own keys the value has. Zod's branches come
- * in the order of the schema; the one with the fewest unknown and missing keys is nearest.
+ * Of several accepted forms, the faults of the one that was meant: the form whose own keys the value has. A value that has no
+ * key of any form is told all forms at once; a union says them in its schema (`error`).
  */
 function unionFaults(
   issue: Extract<Issue, { code: "invalid_union" }>,
@@ -51,25 +54,37 @@ function unionFaults(
   path: readonly PropertyKey[],
 ): InputFault[] {
   const value = at(root, path);
-  const branches = issue.errors.filter((branch) => branch.length > 0);
-  if (value === null || typeof value !== "object" || branches.length === 0) {
+  // A branch that refuses the value's very kind, such as a list where an object was given, was not meant.
+  const branches = issue.errors.filter(
+    (branch) => !branch.some(({ code, path: place }) => code === "invalid_type" && place.length === 0),
+  );
+  if (branches.length === 0 || branches.every((branch) => sharesNoKey(branch, value))) {
+    const forms = issue.message === UNNAMED_FORMS ? "one of the forms in /api/v1/openapi.json" : issue.message;
     return [
       {
         path: pointer(path),
         code: value === undefined ? "missing" : "wrongType",
-        message: `${given(value)}. One of the forms in /api/v1/openapi.json is accepted here.`,
+        message: `${given(value)}; needed is ${forms}.`,
       },
     ];
   }
   const cost = (branch: readonly Issue[]): number =>
     branch.reduce((sum, each) => {
-      if (each.path.length > 0 && each.code !== "invalid_type") return sum;
-      if (each.code === "unrecognized_keys") return sum + 10 * each.keys.length;
-      if (each.code === "invalid_type" && each.path.length === 1 && at(value, each.path) === undefined) return sum + 11;
+      if (each.code === "unrecognized_keys" && each.path.length === 0) return sum + 10 * each.keys.length;
+      if (each.path.length === 1 && at(value, each.path) === undefined) return sum + 11;
       return sum + (each.path.length === 0 ? 20 : 1);
     }, 0);
   const nearest = branches.reduce((best, branch) => (cost(branch) < cost(best) ? branch : best));
   return faultsOf(nearest, root, path);
+}
+
+/** zod's message where a union says nothing of its own. */
+const UNNAMED_FORMS = "Invalid input";
+
+function sharesNoKey(branch: readonly Issue[], value: unknown): boolean {
+  if (value === null || typeof value !== "object" || Array.isArray(value)) return false;
+  const unknown = branch.find(({ code, path }) => code === "unrecognized_keys" && path.length === 0);
+  return Object.keys(value).length === (unknown?.code === "unrecognized_keys" ? unknown.keys.length : 0);
 }
 
 function codeOf(issue: Issue): string {
@@ -108,13 +123,18 @@ const TYPE_WORDS: Readonly<Record<string, string>> = {
   int: "a whole number",
 };
 
+function amount(count: number | bigint, ofText: boolean): string {
+  const [one, many] = ofText ? ["character is", "characters are"] : ["entry is", "entries are"];
+  return `${String(count)} ${count === 1 ? one : many}`;
+}
+
 function messageOf(issue: Issue, value: unknown): string {
   switch (issue.code) {
     case "invalid_type":
       return `${given(value)}; ${TYPE_WORDS[issue.expected] ?? issue.expected} is needed.${typeof value === "string" && issue.expected === "number" ? " Send it as a JSON number, without quotes." : ""}`;
     case "too_small":
       if (issue.origin === "string" || issue.origin === "array")
-        return `At least ${String(issue.minimum)} ${issue.origin === "string" ? "characters are" : "entries are"} needed.`;
+        return `At least ${amount(issue.minimum, issue.origin === "string")} needed.`;
       return `${given(value)}; ${issue.inclusive ? "at least" : "more than"} ${String(issue.minimum)} is accepted.`;
     case "too_big":
       if (issue.origin === "string" || issue.origin === "array")

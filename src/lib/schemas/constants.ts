@@ -35,7 +35,9 @@ export const energyRangeSchema = z
   });
 
 export const energiesSchema = z
-  .union([z.array(energyKeV).min(1).max(CONSTANTS_LIMITS.energies), energyRangeSchema])
+  .union([z.array(energyKeV).min(1).max(CONSTANTS_LIMITS.energies), energyRangeSchema], {
+    error: "a list of energies in keV, or a range { from, to, count, spacing }",
+  })
   .meta({
     description:
       "Energies in keV: a list in any order, repeats allowed, one row each; or a range with both ends and a count, spaced in log energy unless told otherwise.",

@@ -108,29 +108,37 @@ export type Component = PartStatement & { fraction: number };
 export type Solute = PartStatement & { mgPerMl: number };
 export type MaterialStatement = FormulaMaterial | KeptMaterial | MixtureMaterial | SolutionMaterial;
 
+const PART_FORMS = "a part: formula, or materialId, or components with basis, or solvent with solutes";
+
 const partSchema: z.ZodType<PartStatement> = z.lazy(() =>
-  z.union([formulaPartSchema, keptMaterialSchema, mixtureMaterialSchema, solutionMaterialSchema]),
+  z.union([formulaPartSchema, keptMaterialSchema, mixtureMaterialSchema, solutionMaterialSchema], {
+    error: PART_FORMS,
+  }),
 );
 const componentSchema: z.ZodType<Component> = z.lazy(() =>
-  z.union([
-    formulaPartSchema.extend(fraction),
-    keptMaterialSchema.extend(fraction),
-    mixtureMaterialSchema.extend(fraction),
-    solutionMaterialSchema.extend(fraction),
-  ]),
+  z.union(
+    [
+      formulaPartSchema.extend(fraction),
+      keptMaterialSchema.extend(fraction),
+      mixtureMaterialSchema.extend(fraction),
+      solutionMaterialSchema.extend(fraction),
+    ],
+    { error: `${PART_FORMS}; each with fraction` },
+  ),
 ) as z.ZodType<Component>;
 const soluteSchema: z.ZodType<Solute> = z.lazy(() =>
-  z.union([
-    formulaPartSchema.extend(concentration),
-    keptMaterialSchema.extend(concentration),
-    mixtureMaterialSchema.extend(concentration),
-    solutionMaterialSchema.extend(concentration),
-  ]),
+  z.union(
+    [
+      formulaPartSchema.extend(concentration),
+      keptMaterialSchema.extend(concentration),
+      mixtureMaterialSchema.extend(concentration),
+      solutionMaterialSchema.extend(concentration),
+    ],
+    { error: `${PART_FORMS}; each with mgPerMl` },
+  ),
 ) as z.ZodType<Solute>;
 
-export const materialSchema: z.ZodType<MaterialStatement> = z.union([
-  formulaMaterialSchema,
-  keptMaterialSchema,
-  mixtureMaterialSchema,
-  solutionMaterialSchema,
-]);
+export const materialSchema: z.ZodType<MaterialStatement> = z.union(
+  [formulaMaterialSchema, keptMaterialSchema, mixtureMaterialSchema, solutionMaterialSchema],
+  { error: "a material: formula with densityGCm3, or materialId, or components with basis, or solvent with solutes" },
+);
