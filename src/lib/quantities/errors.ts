@@ -4,6 +4,7 @@ export type QuantityErrorCode =
   | "decimalComma"
   | "notANumber"
   | "foreignDigits"
+  | "invisibleCharacter"
   | "notFinite"
   | "underflow"
   | "unknownUnit"

@@ -9,11 +9,14 @@ interface UnitEntry {
   readonly factor: number;
   /** Spelling for mathjs, for the test; null where it has no such unit. */
   readonly mathjs: string | null;
+  /** True for a second spelling, which is read but not offered. */
+  readonly again: boolean;
 }
 
-const unit = (factor: number, mathjs: string | null): UnitEntry => ({ factor, mathjs });
+const unit = (factor: number, mathjs: string | null): UnitEntry => ({ factor, mathjs, again: false });
+const again = (factor: number, mathjs: string | null): UnitEntry => ({ factor, mathjs, again: true });
 
-/** By dimension, in the order they are offered in messages. µ (U+00B5), μ (U+03BC), Å (U+00C5 and U+212B) are folded first. */
+/** By dimension, in the order they are offered in messages. Spellings are folded first (foldUnit). */
 export const UNITS: Readonly<Record<Dimension, Readonly<Record<string, UnitEntry>>>> = {
   energy: {
     keV: unit(1e3, "keV"),
@@ -23,18 +26,18 @@ export const UNITS: Readonly<Record<Dimension, Readonly<Record<string, UnitEntry
   length: {
     mm: unit(1e-3, "mm"),
     µm: unit(1e-6, "um"),
-    um: unit(1e-6, "um"),
+    um: again(1e-6, "um"),
     nm: unit(1e-9, "nm"),
     Å: unit(1e-10, "angstrom"),
-    A: unit(1e-10, "angstrom"),
-    angstrom: unit(1e-10, "angstrom"),
+    A: again(1e-10, "angstrom"),
+    angstrom: again(1e-10, "angstrom"),
     pm: unit(1e-12, "pm"),
     cm: unit(1e-2, "cm"),
     m: unit(1, "m"),
   },
   density: {
     "g/cm3": unit(1e3, "g/cm^3"),
-    "g/cc": unit(1e3, "g/cc"),
+    "g/cc": again(1e3, "g/cc"),
     "g/mL": unit(1e3, "g/ml"),
     "kg/m3": unit(1, "kg/m^3"),
     "mg/cm3": unit(1, "mg/cm^3"),
@@ -42,7 +45,7 @@ export const UNITS: Readonly<Record<Dimension, Readonly<Record<string, UnitEntry
   },
   fraction: {
     "%": unit(1e-2, null),
-    "": unit(1, null),
+    "": again(1, null),
   },
   concentration: {
     "mg/mL": unit(1, "mg/ml"),
@@ -51,18 +54,40 @@ export const UNITS: Readonly<Record<Dimension, Readonly<Record<string, UnitEntry
   },
 };
 
-/** One spelling for every way a unit is written: superscripts, carets, micro and ångström signs, litres. */
+/** Units that are never read, known only so that a message can say what they measure. */
+export const FOREIGN_UNITS: Readonly<Record<string, string>> = {
+  kg: "mass",
+  g: "mass",
+  mg: "mass",
+  L: "volume",
+  mL: "volume",
+  s: "time",
+  K: "temperature",
+  "°C": "temperature",
+  Gy: "dose",
+  mGy: "dose",
+  Hz: "frequency",
+};
+
+/**
+ * One spelling for every way a unit is written: superscripts, carets, negative powers, micro and ångström signs, litres, and
+ * the letters of keV and eV in any case, which mean nothing else (MeV and meV would).
+ */
 export function foldUnit(written: string): string {
-  return written
-    .replace(/[\u03bc]/g, "µ")
-    .replace(/[\u212b]/g, "Å")
+  const plain = written
+    .replace(/\u03bc/g, "µ")
+    .replace(/\u212b/g, "Å")
     .replace(/\^|\*\*/g, "")
-    .replace(/²/g, "2")
-    .replace(/³/g, "3")
-    .replace(/\s+/g, "")
-    .replace(/ml$/, "mL")
-    .replace(/l$/, (end) => (/\/m?l$/.test(written.trim()) ? "L" : end));
+    .replace(/[²³⁻]/g, (sign) => ({ "²": "2", "³": "3" })[sign] ?? "-")
+    .replace(/[\s·⋅]+/g, "")
+    .replace(/(c?m)-3$/, "/$13")
+    .replace(/(m?[lL])-1$/, "/$1");
+  if (/^k?ev$/i.test(plain)) return plain.length === 3 ? "keV" : "eV";
+  return plain.replace(/(^|\/)ml$/, "$1mL").replace(/(^|\/)l$/, "$1L");
 }
 
+/** The spellings that messages offer. */
 export const unitNames = (dimension: Dimension): string[] =>
-  Object.keys(UNITS[dimension]).filter((name) => name !== "");
+  dimension === "energy"
+    ? ["keV", "eV", "Å", "nm"]
+    : Object.entries(UNITS[dimension]).flatMap(([name, entry]) => (entry.again ? [] : [name]));

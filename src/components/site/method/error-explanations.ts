@@ -218,7 +218,10 @@ type FieldCode =
   | "tooManyRows"
   | "outsideTable";
 
-export const QUANTITY_EXPLANATIONS: Record<QuantityErrorCode | "outsideTable" | "tooFewPoints", Explanation> = {
+export const QUANTITY_EXPLANATIONS: Record<
+  Exclude<QuantityErrorCode, "invisibleCharacter"> | "outsideTable" | "tooFewPoints",
+  Explanation
+> = {
   empty: { means: "The field holds nothing.", remedy: "Write a value, such as 20 keV or H2O." },
   tooLong: {
     means: "The text or list is longer than the limit named; a formula has at most 256 characters.",

@@ -61,7 +61,7 @@ describe("parseQuantity", () => {
     ["N3", "NaN", "density", "notANumber"],
     ["N4", "1e400", "density", "notFinite"],
     ["N5", "1e-400", "density", "underflow"],
-    ["N6", "2.7 kg", "density", "unknownUnit"],
+    ["N6", "2.7 kg", "density", "wrongDimension"],
     ["", "20 keV", "density", "wrongDimension"],
     ["N7", "2,7", "density", "decimalComma"],
     ["N8", "2.7;import({})", "density", "unknownUnit"],
