@@ -2,16 +2,20 @@
  * The front server: everything between a caller's bytes and the pages' server. The checks run in one order, cheap and
  * raw ones first; each says no by throwing a ProblemError.
  */
-import { randomBytes } from "node:crypto";
-import type { IncomingMessage, ServerResponse } from "node:http";
-import type { Socket } from "node:net";
+import type { IncomingMessage } from "node:http";
 import compress from "@fastify/compress";
 import fastifyStatic from "@fastify/static";
-import fastify, { type FastifyBaseLogger, type FastifyInstance, LogController } from "fastify";
+import fastify, {
+  type FastifyBaseLogger,
+  type FastifyInstance,
+  type FastifyReply,
+  type FastifyRequest,
+  LogController,
+} from "fastify";
 import { ProblemError } from "#src/lib/http/problems.ts";
 import type { Settings } from "#src/lib/settings.ts";
-import { askPages, type PageHandler } from "./adapter.ts";
-import { clientProblem, isApiPath, problemOf, sendProblem, writeRawProblem } from "./answers.ts";
+import { askPages, type PageAnswer, type PageHandler } from "./adapter.ts";
+import { isApiPath, problemOf, sendProblem } from "./answers.ts";
 import { checkBodyHeaders, MAX_BODY_BYTES } from "./bodies.ts";
 import { addressRule, replaceForwarding } from "./clientAddress.ts";
 import { trackConnections } from "./connections.ts";
@@ -22,6 +26,7 @@ import { type Address, readAddress } from "./paths.ts";
 import { createShedding, SHEDDING_LIMITS, type SheddingLimits } from "./shedding.ts";
 import { checkHost, checkOrigin, siteOf } from "./site.ts";
 import { staticFiles } from "./statics.ts";
+import { answerUnreadable, guardServer, newRequestId } from "./unreadable.ts";
 
 declare module "fastify" {
   interface FastifyRequest {
@@ -88,14 +93,17 @@ export async function createFront(options: FrontOptions): Promise<Front> {
       maxHeaderSize: 2 * MAX_HEADER_BYTES,
       requireHostHeader: false,
     },
-    clientErrorHandler: (error, socket) => answerUnreadable(error, socket, headers, log),
+    clientErrorHandler: (error, socket) => {
+      if (connections.isAnswering(socket)) socket.destroy();
+      else answerUnreadable(error, socket, headers, log);
+    },
     frameworkErrors: (error, request, reply) => {
       void sendProblem(request, reply, problemOf(error));
     },
   });
   app.server.maxConnections = MAX_CONNECTIONS;
-  guardServer(app, headers);
-  const closeQuietConnections = trackConnections(app.server);
+  guardServer(app.server, headers);
+  const connections = trackConnections(app.server);
 
   const shed = createShedding(app, options.shedding ?? SHEDDING_LIMITS);
   const limit = await lookupLimits(app, settings.limitsFactor);
@@ -168,20 +176,7 @@ export async function createFront(options: FrontOptions): Promise<Front> {
         requestId: request.id,
         clientAddress: request.clientAddress,
       });
-      const type = String(answer.headers["content-type"] ?? "");
-      const bare = Buffer.isBuffer(answer.body) && answer.body.length === 0;
-      if (answer.status >= 500 && isApiPath(path) && !type.startsWith("application/problem+json")) {
-        throw new Error("A route failed.");
-      }
-      if (answer.status >= 500 && bare) throw new Error("A page failed.");
-      if (answer.status === 404 && bare && request.method !== "HEAD") {
-        throw new ProblemError("notFound", "Nothing is served at this address.");
-      }
-      void reply.code(answer.status).headers(answer.headers);
-      if (type === "text/html") void reply.type("text/html; charset=utf-8");
-      void reply.header("content-security-policy", policyFor(type, policyGiven(answer.headers)));
-      if (!reply.hasHeader("cache-control")) void reply.header("cache-control", "no-cache");
-      return reply.send(bare ? null : answer.body);
+      return sendAnswer(request, reply, answer);
     },
   });
 
@@ -189,38 +184,9 @@ export async function createFront(options: FrontOptions): Promise<Front> {
     app,
     startClosing: () => {
       closing = true;
-      closeQuietConnections();
+      connections.closeQuiet();
     },
   };
-}
-
-/** Sets the security headers before anything else touches an answer, and answers what Node would answer without them. */
-function guardServer(app: FastifyInstance, headers: Readonly<Record<string, string>>): void {
-  app.server.prependListener("request", (_request: IncomingMessage, response: ServerResponse) => {
-    for (const [name, value] of Object.entries(headers)) response.setHeader(name, value);
-  });
-  app.server.on("checkExpectation", (request: IncomingMessage, response: ServerResponse) => {
-    app.server.emit("request", request, response);
-  });
-  app.server.on("connect", (_request: IncomingMessage, socket: Socket) => {
-    writeRawProblem(socket, new ProblemError("methodNotAllowed", "This is no proxy."), newRequestId(), headers);
-  });
-}
-
-function answerUnreadable(
-  error: Error & { code?: string },
-  socket: Socket,
-  headers: Readonly<Record<string, string>>,
-  log: FastifyBaseLogger,
-): void {
-  if (error.code === "ECONNRESET" || !socket.writable) {
-    socket.destroy();
-    return;
-  }
-  const requestId = newRequestId();
-  const problem = clientProblem(error);
-  log.info({ requestId, status: problem.code, address: socket.remoteAddress }, "A request could not be read.");
-  writeRawProblem(socket, problem, requestId, headers);
 }
 
 function checkHeaderSize(request: IncomingMessage): void {
@@ -238,9 +204,22 @@ function checkRange(range: string | undefined): void {
   }
 }
 
-function policyGiven(headers: Readonly<Record<string, unknown>>): string | undefined {
+/** Hands on what the pages' server answered, with what it left out; failures that have no words of their own get ours. */
+function sendAnswer(request: FastifyRequest, reply: FastifyReply, answer: PageAnswer): FastifyReply {
+  const { status, headers, body } = answer;
+  const type = String(headers["content-type"] ?? "");
+  const isBare = Buffer.isBuffer(body) && body.length === 0;
+  const isProblem = type.startsWith("application/problem+json");
+  if (status >= 500 && (isBare || (isApiPath(request.address.path) && !isProblem))) throw new Error("A page failed.");
+  if (status === 404 && isBare && request.method !== "HEAD") {
+    throw new ProblemError("notFound", "Nothing is served at this address.");
+  }
   const policy = headers["content-security-policy"];
-  return typeof policy === "string" ? policy : undefined;
+  void reply.code(status).headers(headers);
+  if (type === "text/html") void reply.type("text/html; charset=utf-8");
+  void reply.header("content-security-policy", policyFor(type, typeof policy === "string" ? policy : undefined));
+  if (!reply.hasHeader("cache-control")) void reply.header("cache-control", "no-cache");
+  return reply.send(isBare ? null : body);
 }
 
 function singleHeader(value: string | string[] | undefined): string | undefined {
@@ -249,8 +228,4 @@ function singleHeader(value: string | string[] | undefined): string | undefined 
 
 function retryAfter(seconds: number): { headers: Record<string, string> } {
   return { headers: { "retry-after": String(seconds) } };
-}
-
-function newRequestId(): string {
-  return randomBytes(9).toString("base64url");
 }

@@ -1,5 +1,6 @@
 /** TRUST 6: hostile headers, paths and bodies, as bytes on a connection; the process stays up and says nothing it should not. */
 import { readFileSync } from "node:fs";
+import { connect } from "node:net";
 import { afterAll, beforeAll, describe, expect, inject, it } from "vitest";
 import type { ProblemCode } from "#src/lib/http/problems.ts";
 import { type RunningFront, startFront } from "#tests/support/front.ts";
@@ -282,6 +283,30 @@ describe("bytes that are no request", () => {
     "\u0016\u0003\u0001\u0002",
   ])("%j", async (bytes) => {
     refused(await rawRequest(baseUrl, bytes), "malformed");
+  });
+});
+
+describe("a connection", () => {
+  it("that turns to nonsense while an answer is being sent is cut, not written into", async () => {
+    const slow = await startFront({
+      handler: async (_request, response) => {
+        response.writeHead(200, { "content-type": "text/event-stream" });
+        response.write("data: begun\n\n");
+        await new Promise((resolve) => setTimeout(resolve, 400));
+        response.end("data: end\n\n");
+      },
+    });
+    const { hostname, port } = new URL(slow.baseUrl);
+    const socket = connect({ port: Number(port), host: hostname === "localhost" ? "127.0.0.1" : hostname });
+    let text = "";
+    socket.on("data", (chunk) => (text += chunk.toString()));
+    socket.write(request(slow.baseUrl, "GET /"));
+    await new Promise((resolve) => setTimeout(resolve, 150));
+    socket.write("\u0000nonsense\r\n\r\n");
+    await new Promise((resolve) => socket.once("close", resolve));
+    expect(text).toContain("data: begun");
+    expect(text.match(/HTTP\/1\.1/g)).toHaveLength(1);
+    await slow.stop();
   });
 });
 
