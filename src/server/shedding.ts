@@ -16,6 +16,8 @@ export interface SheddingLimits {
 export const SHEDDING_LIMITS: SheddingLimits = { underWay: 64, turnMs: 250 };
 /** Health and built files cost little and keep people informed: they go last, at this many times the limits. */
 const LAST = 4;
+/** A long turn is refused for only where this share of the limit is under way: on a slow machine one person must get through. */
+const CROWD = 4;
 const TICK_MS = 20;
 const HEALTH = "/api/v1/health";
 
@@ -37,7 +39,8 @@ export function createShedding(
   return (response, path, isFile) => {
     const share = isFile || path === HEALTH ? LAST : 1;
     const late = performance.now() - turn - TICK_MS;
-    if (late > limits.turnMs * share || underWay.size >= limits.underWay * share) {
+    const crowded = underWay.size >= (limits.underWay * share) / CROWD;
+    if ((late > limits.turnMs * share && crowded) || underWay.size >= limits.underWay * share) {
       throw new ProblemError("overloaded", "Too much is asked at once. Try again in a few seconds.", {
         headers: { "retry-after": "2" },
       });

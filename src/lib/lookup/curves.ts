@@ -11,6 +11,8 @@ export interface ChosenCurve {
   readonly energiesKeV: readonly number[];
   readonly values: readonly (number | null)[];
   readonly dash?: string;
+  /** Exactly at the question's energy; the points beside it are rounded for drawing. */
+  readonly atEnergy: number | null;
   /** For files: the quantity's key and the material's label. */
   readonly quantity: string;
   readonly material: string;
@@ -30,6 +32,7 @@ export function curvesOf(view: View, choice: Curve): ChosenCurve[] {
         ...common,
         key: "deltaDelta",
         quantity: "deltaDelta",
+        atEnergy: view.pair?.deltaDelta ?? null,
         name: "Δδ",
         word: "phase",
         technique: "phase",
@@ -39,6 +42,7 @@ export function curvesOf(view: View, choice: Curve): ChosenCurve[] {
         ...common,
         key: "deltaMu",
         quantity: "deltaMuPerCm",
+        atEnergy: view.pair?.deltaMuPerCm ?? null,
         name: "Δμ",
         word: "cm⁻¹",
         technique: "absorption",
@@ -51,6 +55,7 @@ export function curvesOf(view: View, choice: Curve): ChosenCurve[] {
       {
         key: "gamma",
         quantity: "gamma",
+        atEnergy: view.pair?.gamma ?? null,
         material,
         name: "γ",
         word: "of the pair",
@@ -68,12 +73,14 @@ function curvesOfMaterial(material: MaterialView, choice: Curve, index: number, 
   const { energiesKeV, ...values } = material.curve;
   const dash = DASHES[index];
   const common = { energiesKeV, material: material.label, ...(dash === undefined ? {} : { dash }) };
+  const now = material.row?.values;
   const short = several ? material.label.slice(0, 14) : "";
   if (choice === "attenuation") {
     const total: ChosenCurve = {
       ...common,
       key: `mu${index}`,
       quantity: "muTotalPerCm",
+      atEnergy: now?.muTotalPerCm ?? null,
       name: "μ",
       word: several ? short : "total",
       technique: "absorption",
@@ -86,6 +93,7 @@ function curvesOfMaterial(material: MaterialView, choice: Curve, index: number, 
         ...common,
         key: "photo",
         quantity: "muPhotoPerCm",
+        atEnergy: now?.muPhotoPerCm ?? null,
         name: "μ",
         word: "photoelectric",
         technique: "absorption",
@@ -100,6 +108,7 @@ function curvesOfMaterial(material: MaterialView, choice: Curve, index: number, 
         ...common,
         key: `ratio${index}`,
         quantity: "deltaOverBeta",
+        atEnergy: now?.deltaOverBeta ?? null,
         name: "δ/β",
         word: short,
         technique: "ink",
@@ -112,6 +121,7 @@ function curvesOfMaterial(material: MaterialView, choice: Curve, index: number, 
       ...common,
       key: `delta${index}`,
       quantity: "delta",
+      atEnergy: now?.delta ?? null,
       name: "δ",
       word: several ? short : "phase",
       technique: "phase",
@@ -121,6 +131,7 @@ function curvesOfMaterial(material: MaterialView, choice: Curve, index: number, 
       ...common,
       key: `beta${index}`,
       quantity: "beta",
+      atEnergy: now?.beta ?? null,
       name: "β",
       word: several ? short : "absorption",
       technique: "absorption",

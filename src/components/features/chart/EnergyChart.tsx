@@ -27,6 +27,8 @@ export interface ChartCurve {
   readonly energiesKeV: readonly number[];
   /** Drawn by absolute value; negative stretches are dashed. */
   readonly values: readonly (number | null)[];
+  /** Exactly at the cursor. */
+  readonly atEnergy: number | null;
   /** Tells curves of one technique apart when several materials are shown. */
   readonly dash?: string;
 }
@@ -134,8 +136,10 @@ export function EnergyChart(props: Props) {
           toKeV={toKeV}
           text={props.cursorText}
           points={curves.flatMap((curve) => {
-            const value = valueAt(curve, cursorKeV);
-            return value === null ? [] : [{ key: curve.key, technique: curve.technique, y: toY(Math.abs(value)) }];
+            const value = curve.atEnergy;
+            return value === null || value === 0
+              ? []
+              : [{ key: curve.key, technique: curve.technique, y: toY(Math.abs(value)) }];
           })}
           {...(props.onMove ? { onMove: props.onMove } : {})}
         />
@@ -150,6 +154,8 @@ export function valueAt(curve: Pick<ChartCurve, "energiesKeV" | "values">, energ
   let after = energiesKeV.findIndex((energy) => energy > energyKeV);
   if (after === -1) after = energiesKeV.at(-1) === energyKeV ? energiesKeV.length - 1 : -1;
   if (after <= 0) return energiesKeV[0] === energyKeV ? (values[0] ?? null) : null;
+  // On a point its own value stands: no rounding of logarithms may come between.
+  if (energiesKeV[after - 1] === energyKeV) return values[after - 1] ?? null;
   const [x0, x1] = [energiesKeV[after - 1] as number, energiesKeV[after] as number];
   const [y0, y1] = [values[after - 1], values[after]];
   if (y0 == null || y1 == null) return null;

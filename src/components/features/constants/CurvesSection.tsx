@@ -1,6 +1,6 @@
 /** Curves over energy with their reading: δ and β, μ, δ/β, and for two materials their differences. */
 import { useRef } from "react";
-import { EnergyChart, type SpreadStrip, valueAt } from "#src/components/features/chart/EnergyChart.tsx";
+import { EnergyChart, type SpreadStrip } from "#src/components/features/chart/EnergyChart.tsx";
 import { ResponsiveChart } from "#src/components/features/chart/ResponsiveChart.tsx";
 import { Mark } from "#src/components/ui/Mark.tsx";
 import { Segments } from "#src/components/ui/Segments.tsx";
@@ -33,7 +33,7 @@ export function CurvesSection({ lookup }: { lookup: Lookup }) {
     view.energyKeV !== null && view.energyKeV >= view.rangeKeV[0] && view.energyKeV <= view.rangeKeV[1]
       ? view.energyKeV
       : null;
-  const readings = curves.map((curve) => ({ curve, value: cursorKeV === null ? null : valueAt(curve, cursorKeV) }));
+  const readings = curves.map((curve) => ({ curve, value: cursorKeV === null ? null : curve.atEnergy }));
   const spoken =
     cursorKeV === null
       ? ""

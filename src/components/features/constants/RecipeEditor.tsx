@@ -1,15 +1,15 @@
 /** Composer of mixtures: one row a part, shares that add up to 100 %, or milligrams per millilitre in a solvent. */
-import { useState } from "react";
+import { useDeferredValue, useState } from "react";
 import { Segments } from "#src/components/ui/Segments.tsx";
 import { Fault } from "#src/components/ui/Messages.tsx";
 import { formatGiven } from "#src/lib/format/numbers.ts";
 import { MIXTURE_BASES, type MixtureBasisChoice, type Question } from "#src/lib/lookup/question.ts";
 import { readRecipe, type RecipeLine, writeRecipe } from "#src/lib/lookup/recipe.ts";
 import { QuestionError, statedMaterial } from "#src/lib/lookup/state-material.ts";
-import { materialFinder } from "#src/lib/lookup/finder.ts";
+import { type KnownMaterial, materialFinder } from "#src/lib/lookup/finder.ts";
 import { BlankPanel } from "./Blank.tsx";
 import { RecipeRow } from "./RecipeRow.tsx";
-import type { Lookup } from "./useLookup.ts";
+import { type Lookup, useNamedMaterials } from "./useLookup.ts";
 
 interface Props {
   readonly lookup: Lookup;
@@ -41,7 +41,14 @@ export function RecipeEditor({ lookup, onTake, onClose }: Props) {
   const [density, setDensity] = useState(question.parts.trim() === "" ? "" : question.density);
   const [asText, setAsText] = useState(false);
   const text = writeRecipe(lines.filter((line) => line.material !== "" || line.share !== ""));
-  const fault = readingFault({ ...question, parts: text, by, density: density.trim() }, lookup);
+  const named = useNamedMaterials(
+    useDeferredValue(lines).map((line) => line.material),
+    lookup.known,
+  );
+  const fault = readingFault({ ...question, parts: text, by, density: density.trim() }, [
+    ...lookup.known,
+    ...named.found,
+  ]);
 
   const update = (index: number, fields: Partial<RecipeLine>): void =>
     setLines((before) => before.map((line, at) => (at === index ? { ...line, ...fields } : line)));
@@ -182,11 +189,11 @@ function SumLine({ lines, onGive }: { lines: readonly RecipeLine[]; onGive: (ind
   );
 }
 
-/** What keeps the mixture from being taken; null when it can be, or when only a name has still to be looked up. */
-function readingFault(question: Question, lookup: Lookup): string | null {
+/** What keeps the mixture from being taken; null when it can be. */
+function readingFault(question: Question, known: readonly KnownMaterial[]): string | null {
   if (question.parts === "") return "The recipe has no parts.";
   try {
-    statedMaterial(question, materialFinder(lookup.known));
+    statedMaterial(question, materialFinder(known));
     return null;
   } catch (error) {
     if (error instanceof QuestionError) return error.message;

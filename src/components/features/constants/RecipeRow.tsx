@@ -60,7 +60,7 @@ export function RecipeRow({ line, number, onChange, onPick, onRemove, onAddInsid
             type="button"
             className="btn btn-small"
             onClick={onAddInside}
-            aria-label={`Add a part inside ${named}`}
+            aria-label={`Add inside ${named}`}
           >
             Add inside
           </button>

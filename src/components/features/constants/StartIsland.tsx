@@ -1,5 +1,5 @@
 /** The start page's look-up: sentence, the values people come for, the curve. */
-import { EnergyChart, valueAt } from "#src/components/features/chart/EnergyChart.tsx";
+import { EnergyChart } from "#src/components/features/chart/EnergyChart.tsx";
 import { ResponsiveChart } from "#src/components/features/chart/ResponsiveChart.tsx";
 import { ValueGroup } from "#src/components/ui/ValueList.tsx";
 import { methodTopicHref } from "#src/lib/format/method-links.ts";
@@ -117,7 +117,7 @@ function StartChart({ lookup }: { lookup: Lookup }) {
       ? view.energyKeV
       : null;
   const readings = curves
-    .map((curve) => `${curve.name} ${significantText(cursorKeV === null ? null : valueAt(curve, cursorKeV))}`)
+    .map((curve) => `${curve.name} ${significantText(cursorKeV === null ? null : curve.atEnergy)}`)
     .join("; ");
   return (
     <ResponsiveChart

@@ -37,7 +37,7 @@ export interface Lookup {
 export function useLookup(start: LookupStart): Lookup {
   const [question, setQuestion] = useState(start.question);
   const [learnt, setLearnt] = useState<readonly KnownMaterial[]>(start.known);
-  const asked = useUnknownWords(question, learnt);
+  const asked = useNamedMaterials(wordsOf(question), learnt);
   const known = useMemo(() => uniqueById([...learnt, ...asked.found]), [learnt, asked.found]);
   const near = asked.near;
   const finder = useMemo(() => materialFinder(known, (words) => near.get(words) ?? []), [known, near]);
@@ -70,17 +70,23 @@ function uniqueById(materials: readonly KnownMaterial[]): KnownMaterial[] {
   return [...new Map(materials.map((material) => [material.id, material])).values()];
 }
 
-/** Words of the question that may name a kept material not yet known here; asked once each. */
-function useUnknownWords(question: Question, known: readonly KnownMaterial[]) {
+/** Words of the question that may name a kept material. */
+function wordsOf(question: Question): string[] {
+  const lines = question.with.split("\n").flatMap((line) => line.split(/[;\t]/).slice(0, 2));
+  const named =
+    question.parts.trim() === "" ? [question.material] : readRecipe(question.parts).map((line) => line.material);
+  return [...named, ...lines];
+}
+
+/** Asks the handbook once for each of the words that is not known here yet. */
+export function useNamedMaterials(given: readonly string[], known: readonly KnownMaterial[]) {
+  const key = given.join("\n");
   const words = useMemo(() => {
     const finder = materialFinder(known);
-    const lines = question.with.split("\n").flatMap((line) => line.split(/[;\t]/).slice(0, 2));
-    const named =
-      question.parts.trim() === "" ? [question.material] : readRecipe(question.parts).map((line) => line.material);
-    return [...new Set([...named, ...lines].map((word) => word.trim()))].filter(
+    return [...new Set(key.split("\n").map((word) => word.trim()))].filter(
       (word) => word.length >= 2 && word.length <= 64 && !finder.find(word),
     );
-  }, [question.material, question.parts, question.with, known]);
+  }, [key, known]);
   const answers = useQueries({
     queries: words.map((word) => ({
       queryKey: ["materials", word],
