@@ -1,5 +1,6 @@
 /** The answer to a look-up: values, spread, notes, curves, thickness. Pure: server page, exports and island share it. */
 import {
+  compareTabulations,
   constantsAtRow,
   constantsOverEnergy,
   type ConstantsOverEnergy,
@@ -15,8 +16,6 @@ import {
   type PairContrast,
   type ScatteringTables,
   type Spread,
-  spreadOf,
-  TABULATION_KEYS,
   type TabulationKey,
   thicknessForTransmissionM,
   type TransmissionEnergy,
@@ -186,10 +185,7 @@ function materialAnswer(
 }
 
 function spreadOver(stated: StatedMaterial, grid: readonly number[], tables: ScatteringTables): (Spread | null)[] {
-  const columns = TABULATION_KEYS.map((key) => [key, constantsOverEnergy(stated.material, grid, tables, key)] as const);
-  return grid.map((_, index) =>
-    spreadOf(new Map(columns.map(([key, values]) => [key, constantsAtRow(values, index)]))),
-  );
+  return compareTabulations(stated.material, grid, tables, DEFAULT_TABULATION).map(({ spread }) => spread);
 }
 
 // Both sides of an edge are sampled, so that no line is drawn across it: the smallest step below that a double can hold well.
@@ -277,7 +273,15 @@ function thicknessAnswer(
   attempt: <T>(read: () => T) => T | null,
 ): ThicknessAnswer {
   const thicknessM = attempt(() =>
-    inField("thickness", () => parseQuantity(question.thickness, "length", { defaultUnit: "mm" })),
+    inField("thickness", () => {
+      const value = parseQuantity(question.thickness, "length", { defaultUnit: "mm" });
+      if (!(value > 0))
+        throw new QuestionError(
+          "thickness",
+          `A thickness of ${question.thickness.slice(0, 20)} is not accepted. Write one above 0.`,
+        );
+      return value;
+    }),
   );
   const wanted = attempt(() =>
     inField("pass", () => {

@@ -3,6 +3,7 @@
  * by the function passed in, so that server, worker and browser resolve alike.
  */
 import {
+  checkedDensity,
   compositionOfFormula,
   compositionOfMassFractions,
   dissolve,
@@ -16,7 +17,6 @@ import {
   parseFormula,
   type Part,
   VACUUM,
-  withDensity,
   withSolidFraction,
 } from "#src/lib/physics/index.ts";
 import { MATERIAL_LIMITS, type MaterialStatement, type PartStatement } from "#src/lib/schemas/material.ts";
@@ -107,7 +107,7 @@ function resolvePart(statement: PartStatement, lookup: MaterialLookup, path: str
     });
   }
   const resolved = attributed(path, () => {
-    if ("formula" in statement) return fromFormula(statement);
+    if ("formula" in statement) return fromFormula(statement, path);
     if ("materialId" in statement) return fromKept(statement, lookup, path);
     if ("components" in statement) return fromMixture(statement, lookup, path, depth);
     return fromSolution(statement, lookup, path, depth);
@@ -156,15 +156,16 @@ function attributed<T>(path: string, compute: () => T): T {
   }
 }
 
-function fromFormula(statement: { formula: string; densityGCm3?: number | undefined }): Resolution {
+/** The density stated, in kg/m³, or null. */
+function givenDensity({ densityGCm3 }: { densityGCm3?: number | undefined }, path: string): number | null {
+  if (densityGCm3 === undefined) return null;
+  return attributed(`${path}/densityGCm3`, () => checkedDensity(kgPerM3FromGCm3(densityGCm3)));
+}
+
+function fromFormula(statement: { formula: string; densityGCm3?: number | undefined }, path: string): Resolution {
   const formula = parseFormula(statement.formula);
-  const composition = compositionOfFormula(formula);
-  const densityKgPerM3 =
-    statement.densityGCm3 === undefined
-      ? null
-      : withDensity(composition, kgPerM3FromGCm3(statement.densityGCm3)).densityKgPerM3;
   return {
-    part: { ...composition, densityKgPerM3 },
+    part: { ...compositionOfFormula(formula), densityKgPerM3: givenDensity(statement, path) },
     densityEstimated: false,
     label: formula.text,
     formula: formula.text,
@@ -208,7 +209,7 @@ function fromMixture(
   path: string,
   depth: number,
 ): Resolution {
-  refuseRepeats(statement.components, `${path}/components`);
+  refuseRepeats(statement.components, (index) => `${path}/components/${index}`);
   const parts = statement.components.map((component, index) =>
     resolvePart(component, lookup, `${path}/components/${index}`, depth + 1),
   );
@@ -217,8 +218,7 @@ function fromMixture(
     statement.components.map((component) => component.fraction),
     statement.basis,
   );
-  const densityKgPerM3 =
-    statement.densityGCm3 === undefined ? mixture.additiveDensityKgPerM3 : kgPerM3FromGCm3(statement.densityGCm3);
+  const densityKgPerM3 = givenDensity(statement, path) ?? mixture.additiveDensityKgPerM3;
   // A single part at full share, given another density, is that part: it keeps its name and formula.
   const only = parts.length === 1 ? parts[0] : undefined;
   return {
@@ -226,7 +226,7 @@ function fromMixture(
     densityEstimated: statement.densityGCm3 === undefined && !only,
     label:
       only?.label ??
-      `${parts.map(({ label }, index) => `${share(statement.components[index]?.fraction ?? 0)} ${label}`).join(" + ")} by ${statement.basis}`,
+      `${short(parts.map(({ label }, index) => `${share(statement.components[index]?.fraction ?? 0)} ${label}`).join(" + "))} by ${statement.basis}`,
     formula: only?.formula ?? null,
     densityUncertaintyPercent: DEFAULT_DENSITY_UNCERTAINTY_PERCENT,
   };
@@ -239,7 +239,9 @@ function fromSolution(
   depth: number,
 ): Resolution {
   const solvent = resolvePart(statement.solvent, lookup, `${path}/solvent`, depth + 1);
-  refuseRepeats([statement.solvent, ...statement.solutes], `${path}/solutes`);
+  refuseRepeats([statement.solvent, ...statement.solutes], (index) =>
+    index === 0 ? `${path}/solvent` : `${path}/solutes/${index - 1}`,
+  );
   const solutes = statement.solutes.map((solute, index) =>
     resolvePart(solute, lookup, `${path}/solutes/${index}`, depth + 1),
   );
@@ -247,7 +249,9 @@ function fromSolution(
   return {
     part: material,
     densityEstimated: material.densityEstimated,
-    label: `${solvent.label} with ${solutes.map(({ label }, index) => `${share(statement.solutes[index]?.mgPerMl ?? 0)} mg/mL ${label}`).join(", ")}`,
+    label: short(
+      `${solvent.label} with ${solutes.map(({ label }, index) => `${share(statement.solutes[index]?.mgPerMl ?? 0)} mg/mL ${label}`).join(", ")}`,
+    ),
     formula: null,
     densityUncertaintyPercent: DEFAULT_DENSITY_UNCERTAINTY_PERCENT,
   };
@@ -263,7 +267,7 @@ function solutionOf(
     return dissolve(
       solvent.part,
       solutes.map(({ part }, index) => ({ part, concentrationKgPerM3: statement.solutes[index]?.mgPerMl ?? 0 })),
-      statement.densityGCm3 === undefined ? null : kgPerM3FromGCm3(statement.densityGCm3),
+      givenDensity(statement, path),
     );
   } catch (error) {
     if (!(error instanceof MaterialError)) throw error;
@@ -273,14 +277,14 @@ function solutionOf(
   }
 }
 
-function refuseRepeats(parts: readonly PartStatement[], path: string): void {
+function refuseRepeats(parts: readonly PartStatement[], pathOf: (index: number) => string): void {
   const seen = new Set<string>();
   for (const [index, part] of parts.entries()) {
-    const key = "materialId" in part ? `id ${part.materialId}` : "formula" in part ? `formula ${part.formula}` : null;
-    if (key === null) continue;
+    // The same substance in another density, such as graphite and diamond, is another part.
+    const key = JSON.stringify({ ...part, fraction: undefined, mgPerMl: undefined });
     if (seen.has(key)) {
       throw new StatementError({
-        path: `${path}/${index}`,
+        path: pathOf(index),
         code: "partRepeated",
         message: `Part ${index + 1} stands twice in the mixture. Add its shares up into one part.`,
       });
@@ -288,6 +292,11 @@ function refuseRepeats(parts: readonly PartStatement[], path: string): void {
     seen.add(key);
   }
 }
+
+/** Longest label: thousands of parts still make one heading. */
+const LABEL_CHARACTERS = 200;
+const short = (label: string): string =>
+  label.length > LABEL_CHARACTERS ? `${label.slice(0, LABEL_CHARACTERS - 1)}…` : label;
 
 const share = (value: number): string => String(Number(value.toPrecision(4)));
 

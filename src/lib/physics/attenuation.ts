@@ -47,33 +47,55 @@ export function energiesForTransmission(
   rangeEv: readonly [number, number],
 ): TransmissionEnergy[] {
   const wantedMu = -Math.log(wantedTransmission) / thicknessM;
-  const excess = (energyEv: number): number => {
-    const columns = constantsOverEnergy(material, [energyEv], tables, tabulation);
-    return columns.muPhotoPerM[0]! + columns.muCoherentPerM[0]! + columns.muIncoherentPerM[0]! - wantedMu;
+  const excessOf = (energiesEv: readonly number[]): number[] => {
+    const { muPhotoPerM, muCoherentPerM, muIncoherentPerM } = constantsOverEnergy(
+      material,
+      energiesEv,
+      tables,
+      tabulation,
+    );
+    return energiesEv.map((_, i) => muPhotoPerM[i]! + muCoherentPerM[i]! + muIncoherentPerM[i]! - wantedMu);
   };
+  const excessAt = (energyEv: number): number => excessOf([energyEv])[0] as number;
+  const grid = branchGrid(material, tables, rangeEv);
+  const excess = excessOf(grid.map(({ energyEv }) => energyEv));
   const found: TransmissionEnergy[] = [];
-  const inside = edgesOf(material, tables, rangeEv).map((edge) => edge.energyEv);
-  const borders = [...new Set([rangeEv[0], ...inside, rangeEv[1]])];
-  for (let branch = 0; branch + 1 < borders.length; branch++) {
-    const start = borders[branch] as number;
-    // Just below the edge that ends the branch: the edge itself belongs to the next one.
-    const border = borders[branch + 1] as number;
-    const end = branch + 2 < borders.length ? border * (1 - 1e-12) : border;
-    const steps = Math.max(2, Math.ceil(Math.log(end / start) * STEPS_PER_LOG_ENERGY));
-    let lowEv = start;
-    let low = excess(lowEv);
-    for (let step = 1; step <= steps; step++) {
-      const highEv = step === steps ? end : start * (end / start) ** (step / steps);
-      const high = excess(highEv);
-      if (low === 0) found.push({ energyEv: lowEv, atEdge: false });
-      else if (low * high < 0) found.push({ energyEv: bisect(excess, lowEv, highEv, low), atEdge: false });
-      lowEv = highEv;
-      low = high;
+  for (const [index, { energyEv, isEdge }] of grid.entries()) {
+    const value = excess[index] as number;
+    const before = grid[index - 1];
+    const valueBefore = excess[index - 1] ?? Number.NaN;
+    if (value === 0) found.push({ energyEv, atEdge: false });
+    else if (before && valueBefore * value < 0) {
+      if (isEdge) found.push({ energyEv, atEdge: true });
+      else found.push({ energyEv: bisect(excessAt, before.energyEv, energyEv, valueBefore), atEdge: false });
     }
-    if (branch + 2 < borders.length && low * excess(border) < 0) found.push({ energyEv: border, atEdge: true });
-    else if (branch + 2 === borders.length && low === 0) found.push({ energyEv: end, atEdge: false });
   }
   return found;
+}
+
+interface GridPoint {
+  readonly energyEv: number;
+  /** The edge itself, which belongs to the branch above it; the point before it lies just below. */
+  readonly isEdge: boolean;
+}
+
+/** Energies (eV, ascending) close enough that μ crosses a value at most once between two of them, edges aside. */
+function branchGrid(material: Material, tables: ScatteringTables, rangeEv: readonly [number, number]): GridPoint[] {
+  const inside = edgesOf(material, tables, rangeEv).map((edge) => edge.energyEv);
+  const borders = [...new Set([rangeEv[0], ...inside, rangeEv[1]])];
+  const grid: GridPoint[] = [{ energyEv: rangeEv[0], isEdge: false }];
+  for (let branch = 0; branch + 1 < borders.length; branch++) {
+    const start = borders[branch] as number;
+    const border = borders[branch + 1] as number;
+    const isLast = branch + 2 === borders.length;
+    const end = isLast ? border : border * (1 - 1e-12);
+    const steps = Math.max(2, Math.ceil(Math.log(end / start) * STEPS_PER_LOG_ENERGY));
+    for (let step = 1; step < steps; step++)
+      grid.push({ energyEv: start * (end / start) ** (step / steps), isEdge: false });
+    grid.push({ energyEv: end, isEdge: false });
+    if (!isLast) grid.push({ energyEv: border, isEdge: true });
+  }
+  return grid;
 }
 
 function bisect(value: (energyEv: number) => number, startEv: number, endEv: number, startValue: number): number {

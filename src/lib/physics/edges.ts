@@ -37,6 +37,8 @@ export function nearestEdgeInBand(edges: readonly Edge[], energyEv: number): Edg
   let nearest: Edge | null = null;
   for (const edge of edges) {
     const distance = Math.abs(energyEv - edge.energyEv);
+    // Bands grow with the edge by far less than their distance: none further up holds the energy.
+    if (edge.energyEv > energyEv && distance >= edgeBandEv(edge.energyEv)) break;
     if (distance >= edgeBandEv(edge.energyEv)) continue;
     if (!nearest || distance < Math.abs(energyEv - nearest.energyEv)) nearest = edge;
   }

@@ -15,7 +15,8 @@ export interface FactorsAt {
   energyAbsorptionM2: number;
 }
 
-interface LogFactors {
+/** Logarithms of an element's columns. */
+export interface LogFactors {
   readonly logE: Float64Array;
   readonly logF2: Float64Array;
   readonly logCoherent: Float64Array | null;
@@ -26,7 +27,7 @@ interface LogFactors {
 // Logarithms of a table are the same for every call; keyed by the table itself, so that callers still pass plain values.
 const LOGS = new WeakMap<ElementFactors, LogFactors>();
 
-function logsOf(factors: ElementFactors): LogFactors {
+export function logsOf(factors: ElementFactors): LogFactors {
   let logs = LOGS.get(factors);
   if (!logs) {
     logs = {
@@ -80,6 +81,7 @@ export function factorsAt(
   out: FactorsAt,
   hint = 0,
   logEnergy = Math.log(energyEv),
+  logs = logsOf(factors),
 ): number {
   const { energiesEv } = factors;
   const row = rowBelow(energiesEv, energyEv, hint);
@@ -87,7 +89,6 @@ export function factorsAt(
     out.f1 = out.f2 = out.coherentM2 = out.incoherentM2 = out.energyAbsorptionM2 = Number.NaN;
     return 0;
   }
-  const logs = logsOf(factors);
   const start = logs.logE[row] as number;
   const weight = energyEv === energiesEv[row] ? 0 : (logEnergy - start) / ((logs.logE[row + 1] as number) - start);
   out.f1 = between(factors.f1, row, weight);

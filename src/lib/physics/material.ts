@@ -64,15 +64,20 @@ export function compositionOfMassFractions(fractions: ReadonlyMap<number, number
   return { massFractions, molarMassGPerMol: null };
 }
 
-/** Adds a density to a composition. 0 < density ≤ 50 g/cm³. @throws MaterialError densityOutOfRange */
-export function withDensity(composition: Composition, densityKgPerM3: number, densityEstimated = false): Material {
+/** The density given back, where 0 < density ≤ 50 g/cm³. @throws MaterialError densityOutOfRange */
+export function checkedDensity(densityKgPerM3: number): number {
   if (!(densityKgPerM3 > 0) || densityKgPerM3 > MAX_DENSITY_KG_PER_M3) {
     throw new MaterialError({
       code: "densityOutOfRange",
-      message: `The density ${gCm3FromKgPerM3(densityKgPerM3)} g/cm³ is not accepted. Give one above 0 and up to 50 g/cm³; the material vacuum stands for no matter.`,
+      message: `The density ${Number(gCm3FromKgPerM3(densityKgPerM3).toPrecision(6))} g/cm³ is not accepted. Give one above 0 and up to 50 g/cm³; the material vacuum stands for no matter.`,
     });
   }
-  return { ...composition, densityKgPerM3, densityEstimated };
+  return densityKgPerM3;
+}
+
+/** Adds a density to a composition. @throws MaterialError densityOutOfRange */
+export function withDensity(composition: Composition, densityKgPerM3: number, densityEstimated = false): Material {
+  return { ...composition, densityKgPerM3: checkedDensity(densityKgPerM3), densityEstimated };
 }
 
 /**
@@ -134,16 +139,10 @@ export interface Mixture {
  */
 export function mix(parts: readonly Part[], fractions: readonly number[], basis: MixtureBasis): Mixture {
   const shares = normaliseFractions(fractions);
-  const weights = parts.map((part, component) => {
-    if (part.massFractions.size === 0) {
-      throw new MaterialError({
-        code: "vacuumInMixture",
-        component,
-        message: "Vacuum cannot be a part of a mixture. Use a solid fraction below 1 for pores.",
-      });
-    }
-    return (shares[component] as number) * weightPerShare(part, component, basis);
-  });
+  refuseVacuum(parts);
+  const weights = parts.map(
+    (part, component) => (shares[component] as number) * weightPerShare(part, component, basis),
+  );
   const total = weights.reduce((sum, weight) => sum + weight, 0);
   const massShares = weights.map((weight) => weight / total);
   return { composition: blend(parts, massShares), additiveDensityKgPerM3: additiveDensity(parts, massShares) };
@@ -158,9 +157,10 @@ export interface Solute {
 /**
  * A solution from concentrations. With the solution's density the solvent fills up to it, ρ_solvent,part = ρ − Σ c; without,
  * volumes are added, ρ = Σ c + ρ_s (1 − Σ c/ρ_i), for which every part needs a density.
- * @throws MaterialError densityMissing, or concentrationTooHigh where no room is left for the solvent
+ * @throws MaterialError densityMissing, or concentrationTooHigh where no room is left for the solvent; component 0 is the solvent
  */
 export function dissolve(solvent: Part, solutes: readonly Solute[], densityKgPerM3: number | null): Material {
+  refuseVacuum([solvent, ...solutes.map(({ part }) => part)]);
   const dissolved = solutes.reduce((sum, solute) => sum + solute.concentrationKgPerM3, 0);
   let density = densityKgPerM3;
   if (density === null) {
@@ -186,6 +186,16 @@ export function electronDensityPerM3(material: Material): number {
     molesPerKg += (fraction * atomicNumber) / (elementByNumber(atomicNumber).standardAtomicWeight * 1e-3);
   }
   return material.densityKgPerM3 * AVOGADRO.value * molesPerKg;
+}
+
+function refuseVacuum(parts: readonly Composition[]): void {
+  const component = parts.findIndex((part) => part.massFractions.size === 0);
+  if (component < 0) return;
+  throw new MaterialError({
+    code: "vacuumInMixture",
+    component,
+    message: "Vacuum cannot be a part of a mixture. Use a solid fraction below 1 for pores.",
+  });
 }
 
 function tooConcentrated(dissolvedKgPerM3: number): MaterialError {

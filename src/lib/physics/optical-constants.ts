@@ -6,7 +6,7 @@
  */
 import { AVOGADRO, CLASSICAL_ELECTRON_RADIUS, PLANCK_TIMES_LIGHT } from "./constants.ts";
 import { elementByNumber } from "./elements.ts";
-import { factorsAt, type FactorsAt } from "./interpolate.ts";
+import { factorsAt, type FactorsAt, logsOf } from "./interpolate.ts";
 import type { Composition, Material } from "./material.ts";
 import { DEFAULT_TABULATION, type ElementFactors, type ScatteringTables, type TabulationKey } from "./scattering.ts";
 import { wavelengthM } from "./units.ts";
@@ -96,16 +96,20 @@ function blankFactors(): FactorsAt {
 }
 
 /**
- * Constants of a material at many energies (eV, any order, repeats allowed; ascending is quickest).
+ * Constants of a material at many energies (eV, any order, repeats allowed).
  *
  * Rows are NaN outside the tabulation or where it lacks an element. Exactly at an edge the side above is taken. Vacuum gives
  * zeros. The scattering part and μ_en come from EPDL97 for every tabulation.
+ *
+ * @param primary columns of EPDL97 for the same material and energies, where they are known already: what the other
+ * tabulations take from there is then not computed again
  */
 export function constantsOverEnergy(
   material: Material,
   energiesEv: ArrayLike<number>,
   tables: ScatteringTables,
   tabulation: TabulationKey = DEFAULT_TABULATION,
+  primary?: ConstantsOverEnergy,
 ): ConstantsOverEnergy {
   const count = energiesEv.length;
   const columns: ConstantsOverEnergy = {
@@ -113,43 +117,70 @@ export function constantsOverEnergy(
     delta: new Float64Array(count),
     beta: new Float64Array(count),
     muPhotoPerM: new Float64Array(count),
-    muCoherentPerM: new Float64Array(count),
-    muIncoherentPerM: new Float64Array(count),
-    muEnergyAbsorptionPerM: new Float64Array(count),
+    muCoherentPerM: primary ? primary.muCoherentPerM.slice() : new Float64Array(count),
+    muIncoherentPerM: primary ? primary.muIncoherentPerM.slice() : new Float64Array(count),
+    muEnergyAbsorptionPerM: primary ? primary.muEnergyAbsorptionPerM.slice() : new Float64Array(count),
   };
   const own = blankFactors();
   const other = blankFactors();
   const logEnergies = columns.energiesEv.map(Math.log);
   const prefactors = columns.energiesEv.map(prefactorM2);
+  const order = ascendingOrder(columns.energiesEv);
   const [lowest, highest] = tables.tabulations[tabulation].rangeEv;
   const twoReHc = 2 * CLASSICAL_ELECTRON_RADIUS.value * PLANCK_TIMES_LIGHT.value;
   for (const { atomsPerM3, factors, scattering } of elementsIn(material, tables, tabulation)) {
+    const known = factors && scattering;
+    const logs = known && logsOf(factors);
+    const scatteringLogs = known && logsOf(scattering);
     let hint = 0;
     let scatteringHint = 0;
-    for (let i = 0; i < count; i++) {
+    for (let step = 0; step < count; step++) {
+      const i = order ? (order[step] as number) : step;
       const energyEv = columns.energiesEv[i] as number;
-      if (!factors || !scattering || energyEv < lowest || energyEv > highest) {
+      if (!known || energyEv < lowest || energyEv > highest) {
         markMissing(columns, i);
         continue;
       }
-      hint = factorsAt(factors, energyEv, own, hint, logEnergies[i] as number);
+      const logEnergy = logEnergies[i] as number;
+      hint = factorsAt(factors, energyEv, own, hint, logEnergy, logs);
       let carrier = own;
-      if (factors !== scattering) {
-        scatteringHint = factorsAt(scattering, energyEv, other, scatteringHint, logEnergies[i] as number);
+      if (factors !== scattering && (!primary || Number.isNaN(own.f2))) {
+        scatteringHint = factorsAt(scattering, energyEv, other, scatteringHint, logEnergy, scatteringLogs);
         carrier = other;
+        // Hydrogen and helium at hard energies: too weak for the older tables to hold, and too weak to matter which table it is.
+        if (Number.isNaN(own.f2) && carrier.f2 <= NEGLIGIBLE_F2) own.f2 = carrier.f2;
       }
-      // Hydrogen and helium at hard energies: too weak for the older tables to hold, and too weak to matter which table it is.
-      if (Number.isNaN(own.f2) && carrier.f2 <= NEGLIGIBLE_F2) own.f2 = carrier.f2;
       const strength = atomsPerM3 * (prefactors[i] as number);
       columns.delta[i]! += strength * own.f1;
       columns.beta[i]! += strength * own.f2;
       columns.muPhotoPerM[i]! += (atomsPerM3 * twoReHc * own.f2) / energyEv;
+      if (primary) continue;
       columns.muCoherentPerM[i]! += atomsPerM3 * carrier.coherentM2;
       columns.muIncoherentPerM[i]! += atomsPerM3 * carrier.incoherentM2;
       columns.muEnergyAbsorptionPerM[i]! += atomsPerM3 * carrier.energyAbsorptionM2;
     }
   }
   return columns;
+}
+
+/** Columns of every tabulation for the same material and energies. */
+export function constantsOfAllTabulations(
+  material: Material,
+  energiesEv: ArrayLike<number>,
+  tables: ScatteringTables,
+): Record<TabulationKey, ConstantsOverEnergy> {
+  const epdl97 = constantsOverEnergy(material, energiesEv, tables, "epdl97");
+  return {
+    epdl97,
+    henke93: constantsOverEnergy(material, energiesEv, tables, "henke93", epdl97),
+    chantler95: constantsOverEnergy(material, energiesEv, tables, "chantler95", epdl97),
+  };
+}
+
+/** Places of the energies in ascending order, which is quickest to look up; null where they ascend already. */
+function ascendingOrder(energiesEv: Float64Array): Uint32Array | null {
+  if (energiesEv.every((energyEv, index) => index === 0 || energyEv >= (energiesEv[index - 1] as number))) return null;
+  return Uint32Array.from(energiesEv.keys()).sort((a, b) => (energiesEv[a] as number) - (energiesEv[b] as number));
 }
 
 function markMissing(columns: ConstantsOverEnergy, index: number): void {

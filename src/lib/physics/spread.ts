@@ -1,6 +1,6 @@
 /** How far the tabulations part (PHYSICS 3.1): least and greatest over those that cover the energy, never an average. */
 import type { Material } from "./material.ts";
-import { constantsAtRow, constantsOverEnergy, type OpticalConstants } from "./optical-constants.ts";
+import { constantsAtRow, constantsOfAllTabulations, type OpticalConstants } from "./optical-constants.ts";
 import { TABULATION_KEYS, type ScatteringTables, type TabulationKey } from "./scattering.ts";
 
 export type Interval = readonly [number, number];
@@ -45,9 +45,10 @@ export function compareTabulations(
   tables: ScatteringTables,
   tabulation: TabulationKey,
 ): ComparedRow[] {
-  const columns = new Map(TABULATION_KEYS.map((key) => [key, constantsOverEnergy(material, energiesEv, tables, key)]));
+  const columns = constantsOfAllTabulations(material, energiesEv, tables);
   return Array.from({ length: energiesEv.length }, (_, index) => {
-    const byTabulation = new Map([...columns].map(([key, values]) => [key, constantsAtRow(values, index)]));
+    const byTabulation = new Map<TabulationKey, OpticalConstants | null>();
+    for (const key of TABULATION_KEYS) byTabulation.set(key, constantsAtRow(columns[key], index));
     return { constants: byTabulation.get(tabulation) ?? null, byTabulation, spread: spreadOf(byTabulation) };
   });
 }
