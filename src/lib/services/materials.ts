@@ -11,8 +11,10 @@ export const QUERY_CHARACTERS = 64;
 
 interface Indexed {
   readonly item: MaterialItem;
-  /** Folded words that name it: id, name, other names, formula. */
+  /** Folded words that name it: id, name, other names. */
   readonly names: readonly string[];
+  /** Folded formula; empty where it has none. */
+  readonly formula: string;
   /** Single words of names and tags. */
   readonly words: readonly string[];
   readonly tags: readonly string[];
@@ -63,21 +65,40 @@ export function searchMaterials(query: string): MaterialItem[] {
   const { all, fuse } = built();
   const wanted = fold(query.slice(0, QUERY_CHARACTERS));
   if (wanted === "") return [];
-  const symbol = elementBySymbol(query.trim())?.symbol;
+  const written = query.trim();
+  const symbol = elementBySymbol(written)?.symbol;
   const ranks: ((entry: Indexed) => boolean)[] = [
-    // A symbol is first of all its element, then any other name spelt the same.
+    // "Co" is first of all cobalt, then what is called so to the letter; "CO" is not an element.
     ({ item }) => symbol !== undefined && item.formula === symbol,
+    ({ item }) => item.alsoKnownAs.includes(written),
+    ({ names }) => symbol === undefined && names.includes(wanted),
+    ({ formula }) => symbol === undefined && formula === wanted,
+  ];
+  const further: typeof ranks = [
     ({ names }) => names.includes(wanted),
     ({ names }) => names.some((name) => name.startsWith(wanted)),
     ({ tags }) => tags.includes(wanted),
     ({ words }) => words.some((word) => word.startsWith(wanted)),
-    ({ item }) => symbol !== undefined && item.massFractions?.[symbol] !== undefined,
     ({ names }) => wanted.length > 2 && names.some((name) => name.includes(wanted)),
   ];
   const found = new Set<MaterialItem>();
-  for (const rank of ranks) for (const entry of all) if (rank(entry)) found.add(entry.item);
+  const take = (rank: (entry: Indexed) => boolean): void => {
+    for (const entry of all) if (rank(entry)) found.add(entry.item);
+  };
+  ranks.forEach(take);
+  // What holds most of the element comes first.
+  if (symbol !== undefined) for (const item of holdersOf(symbol, all)) found.add(item);
+  further.forEach(take);
   for (const { item } of fuse.search(wanted)) found.add(item.item);
   return [...found];
+}
+
+function holdersOf(symbol: string, all: readonly Indexed[]): MaterialItem[] {
+  const share = (item: MaterialItem): number => item.massFractions?.[symbol] ?? 0;
+  return all
+    .map(({ item }) => item)
+    .filter((item) => share(item) > 0)
+    .sort((a, b) => share(b) - share(a));
 }
 
 /** Case, accents and the difference of spaces, hyphens and subscripts do not count. */
@@ -100,6 +121,7 @@ function built(): Index {
       keys: [
         { name: "names", weight: 3 },
         { name: "words", weight: 2 },
+        { name: "formula", weight: 1 },
         { name: "tags", weight: 1 },
       ],
       // Two wrong letters in a word of six pass, a different word of that length does not.
@@ -128,11 +150,10 @@ function indexed(entry: HandbookEntry): Indexed {
     status: "approved",
     note: entry.note ?? null,
   };
-  const names = [entry.id, entry.name, ...entry.alsoKnownAs, ...(entry.formula === null ? [] : [entry.formula])].map(
-    fold,
-  );
+  const names = [entry.id, entry.name, ...entry.alsoKnownAs].map(fold);
+  const formula = entry.formula === null ? "" : fold(entry.formula);
   const words = [...new Set(names.flatMap((name) => name.split(/[^\p{L}\p{N}]+/u)))].filter((word) => word.length > 1);
-  return { item, names, words, tags: entry.tags.map(fold) };
+  return { item, names, formula, words, tags: entry.tags.map(fold) };
 }
 
 function fractionsOf(formula: string): Record<string, number> {

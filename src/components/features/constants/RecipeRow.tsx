@@ -56,12 +56,7 @@ export function RecipeRow({ line, number, onChange, onPick, onRemove, onAddInsid
       </td>
       <td className="recipe-tools">
         {line.depth < MAX_DEPTH ? (
-          <button
-            type="button"
-            className="btn btn-small"
-            onClick={onAddInside}
-            aria-label={`Add inside ${named}`}
-          >
+          <button type="button" className="btn btn-small" onClick={onAddInside} aria-label={`Add inside ${named}`}>
             Add inside
           </button>
         ) : null}
