@@ -9,6 +9,8 @@ import { HANDBOOK_ENTRIES } from "./handbook-entries.ts";
 /** Longest query that is searched; fuzzy search grows with it. */
 export const QUERY_CHARACTERS = 64;
 
+const SHORT_QUERY_SCORE = 0.12;
+
 interface Indexed {
   readonly item: MaterialItem;
   /** Folded words that name it: id, name, other names. */
@@ -89,7 +91,9 @@ export function searchMaterials(query: string): MaterialItem[] {
   // What holds most of the element comes first.
   if (symbol !== undefined) for (const item of holdersOf(symbol, all)) found.add(item);
   further.forEach(take);
-  for (const { item } of fuse.search(wanted)) found.add(item.item);
+  // Few letters are soon near anything: a short query must be nearly right.
+  const loosest = wanted.length <= 4 ? SHORT_QUERY_SCORE : 1;
+  for (const { item, score = 0 } of fuse.search(wanted)) if (score <= loosest) found.add(item.item);
   return [...found];
 }
 

@@ -58,6 +58,7 @@ function AddMaterials({ lookup, lines }: { lookup: Lookup; lines: readonly strin
           floating
           inputClass="input"
           label="Add a material: name, or formula; density"
+          placeholder="Name, or formula; density"
           value={text}
           onChange={setText}
           onPick={(material) => {

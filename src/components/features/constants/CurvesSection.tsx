@@ -37,7 +37,7 @@ export function CurvesSection({ lookup }: { lookup: Lookup }) {
   const spoken =
     cursorKeV === null
       ? ""
-      : `${formatGiven(cursorKeV)} keV; ${readings.map(({ curve, value }) => `${curve.name} ${significantText(value)}`).join("; ")}`;
+      : `${formatGiven(cursorKeV)} keV; ${readings.map(({ curve, value }) => `${curve.name} ${view.others.length > 0 ? `${curve.word} ` : ""}${significantText(value)}`).join("; ")}`;
   const options = CURVES.filter((curve) => view.pairCurve || !curve.startsWith("pair")).map((curve) => ({
     value: curve,
     label: CURVE_NAMES[curve],
@@ -59,7 +59,9 @@ export function CurvesSection({ lookup }: { lookup: Lookup }) {
                 {curve.technique === "ink" ? (
                   <b>{curve.name}</b>
                 ) : (
-                  <Mark technique={curve.technique}>{curve.name}</Mark>
+                  <Mark technique={curve.technique}>
+                    {view.others.length > 0 ? `${curve.name} ${curve.word}` : curve.name}
+                  </Mark>
                 )}{" "}
                 {significantText(value)}
               </span>

@@ -16,6 +16,7 @@ interface Props {
   /** List under the field as a layer, for fields in a table; otherwise in the flow of a panel. */
   readonly floating?: boolean;
   readonly inputClass?: string;
+  readonly placeholder?: string;
   readonly onBlur?: (text: string) => void;
 }
 
@@ -77,6 +78,7 @@ export function MaterialCombobox(props: Props) {
         autoCapitalize="off"
         spellCheck={false}
         maxLength={256}
+        placeholder={props.placeholder}
         value={value}
         onChange={(event) => {
           onChange(event.currentTarget.value);

@@ -64,7 +64,7 @@ export function ThicknessSection({ lookup }: { lookup: Lookup }) {
 /** Nearly all and nearly nothing keep enough digits to tell them from all and nothing. */
 function transmissionText(share: number): string {
   if (share > 0.999 && share < 1) return `all but ${formatPercent(1 - share, 2)}`;
-  return share < 1e-4 ? `${significantText(share)} of one` : formatPercent(share, 4);
+  return share < 1e-4 ? `${significantText(share * 100)}\u00a0%` : formatPercent(share, 4);
 }
 
 function energySentence(view: View, thickness: string, pass: string): string {
