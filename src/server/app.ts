@@ -211,6 +211,10 @@ function sendAnswer(request: FastifyRequest, reply: FastifyReply, answer: PageAn
   const isBare = Buffer.isBuffer(body) && body.length === 0;
   const isProblem = type.startsWith("application/problem+json");
   if (status >= 500 && (isBare || (isApiPath(request.address.path) && !isProblem))) throw new Error("A page failed.");
+  // Some spellings of an address match no route; the pages' server then answers with a page.
+  if (status === 404 && !isProblem && isApiPath(request.address.path)) {
+    throw new ProblemError("notFound", "The API has nothing at this address; /api/v1/openapi.json lists what it has.");
+  }
   if (status === 404 && isBare && request.method !== "HEAD") {
     throw new ProblemError("notFound", "Nothing is served at this address.");
   }

@@ -67,9 +67,13 @@ function refuseOtherAccept(request: Request): void {
   if (!accept) return;
   const taken = accept
     .split(",")
-    .some((part) => /^\s*(\*\/\*|application\/(\*|json|problem\+json))\s*(;|$)/i.test(part));
+    .some(
+      (part) =>
+        /^\s*(\*\/\*|application\/(\*|json|problem\+json))\s*(;|$)/i.test(part) &&
+        !/;\s*q\s*=\s*0(\.0*)?\s*$/i.test(part),
+    );
   // Browsers that open an API address ask for HTML first; they get JSON all the same.
-  if (!taken && !/text\/html|\*\//i.test(accept))
+  if (!taken && !/text\/html|\*\/(?!\*)/i.test(accept))
     throw new ProblemError(
       "notAcceptable",
       "Only application/json is answered here. Send Accept: application/json, or leave it out.",
@@ -126,17 +130,22 @@ function respond(request: Request, value: unknown, cache: "no-store" | "revalida
     .get("if-none-match")
     ?.split(",")
     .map((tag) => tag.trim().replace(/^W\//, ""));
-  return known?.includes(etag) ? new Response(null, { status: 304, headers }) : new Response(text, { headers });
+  return known?.some((tag) => tag === etag || tag === "*")
+    ? new Response(null, { status: 304, headers })
+    : new Response(text, { headers });
 }
 
-/** The answer to methods that a route does not offer. */
-export function otherMethods(...offered: string[]): APIRoute {
-  const allow = [...offered, ...(offered.includes("GET") ? ["HEAD"] : [])].join(", ");
-  return ({ url, locals, request }) =>
-    problemResponse(
+/** The route for every method that has none of its own: HEAD is GET without the body, others are refused. */
+export function otherMethods(routes: { readonly GET?: APIRoute; readonly POST?: APIRoute }): APIRoute {
+  const allow = [...Object.keys(routes), ...(routes.GET ? ["HEAD"] : [])].join(", ");
+  return (context) => {
+    const { url, locals, request } = context;
+    if (request.method === "HEAD" && routes.GET) return routes.GET(context);
+    return problemResponse(
       new ProblemError("methodNotAllowed", `${request.method} is not offered here. Offered: ${allow}.`, {
         headers: { allow },
       }),
       { path: url.pathname, requestId: locals.requestId },
     );
+  };
 }

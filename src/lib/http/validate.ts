@@ -78,7 +78,7 @@ function unionFaults(
   return faultsOf(nearest, root, path);
 }
 
-/** zod's message where a union says nothing of its own. */
+/** How zod's own messages begin, where a schema says nothing of its own (`error`). */
 const UNNAMED_FORMS = "Invalid input";
 
 function sharesNoKey(branch: readonly Issue[], value: unknown): boolean {
@@ -131,6 +131,7 @@ function amount(count: number | bigint, ofText: boolean): string {
 function messageOf(issue: Issue, value: unknown): string {
   switch (issue.code) {
     case "invalid_type":
+      if (!issue.message.startsWith(UNNAMED_FORMS)) return `${given(value)}; needed is ${issue.message}.`;
       return `${given(value)}; ${TYPE_WORDS[issue.expected] ?? issue.expected} is needed.${typeof value === "string" && issue.expected === "number" ? " Send it as a JSON number, without quotes." : ""}`;
     case "too_small":
       if (issue.origin === "string" || issue.origin === "array")

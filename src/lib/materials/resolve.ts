@@ -183,7 +183,10 @@ function fromKept(
     throw new StatementError({
       path: `${path}/materialId`,
       code: "materialNotFound",
-      message: "No material has that id. Look it up by name at /api/v1/materials.",
+      message:
+        statement.revision === undefined
+          ? "No material has that id. Look it up by name at /api/v1/materials."
+          : `No material has that id and a revision ${statement.revision}. Look it up by name at /api/v1/materials.`,
     });
   }
   const densityUncertaintyPercent = kept.densityUncertaintyPercent ?? DEFAULT_DENSITY_UNCERTAINTY_PERCENT;

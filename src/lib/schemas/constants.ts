@@ -48,11 +48,16 @@ export const constantsRequestSchema = z
   .meta({ id: "ConstantsRequest" });
 export type ConstantsRequest = z.infer<typeof constantsRequestSchema>;
 
+/** The frame of a batch; what each item must be is judged item by item. */
+export const constantsBatchFrameSchema = z.strictObject({
+  items: z.array(z.unknown()).min(1).max(CONSTANTS_LIMITS.batchItems),
+});
+
 export const constantsBatchRequestSchema = z
   .strictObject({ items: z.array(constantsRequestSchema).min(1).max(CONSTANTS_LIMITS.batchItems) })
   .meta({
     id: "ConstantsBatchRequest",
-    description: `At most ${CONSTANTS_LIMITS.batchItems} requests and ${CONSTANTS_LIMITS.batchRows} rows in all.`,
+    description: `At most ${CONSTANTS_LIMITS.batchItems} requests and ${CONSTANTS_LIMITS.batchRows} rows in all. Each is answered or refused by itself.`,
   });
 
 const nullableNumber = z.number().nullable();

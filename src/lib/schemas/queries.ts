@@ -27,7 +27,7 @@ export function numberText(what: string) {
 }
 
 const energiesText = z
-  .string()
+  .string({ error: "energies in keV, parted by commas, such as 10,20" })
   .min(1)
   .max(32 * CONSTANTS_LIMITS.energies)
   .transform((text, context) => {

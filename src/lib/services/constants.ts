@@ -3,6 +3,7 @@ import { citation } from "#src/lib/lookup/citation.ts";
 import { valueRows } from "#src/lib/lookup/values.ts";
 import { valuesOf } from "#src/lib/lookup/view.ts";
 import { ProblemError } from "#src/lib/http/problems.ts";
+import { validate } from "#src/lib/http/validate.ts";
 import { densityGCm3, type MaterialLookup, resolveMaterial, StatementError } from "#src/lib/materials/resolve.ts";
 import {
   angstromFromM,
@@ -24,6 +25,7 @@ import {
   type ConstantsAnswer,
   type ConstantsRequest,
   CONSTANTS_LIMITS,
+  constantsRequestSchema,
   type FactorsAnswer,
 } from "#src/lib/schemas/constants.ts";
 
@@ -42,16 +44,21 @@ export function energiesOf(energies: Energies): number[] {
   });
 }
 
-/** @throws StatementError, or ProblemError invalid where an energy is outside the table */
+/**
+ * At most 60 ms of one core for the largest request (every element, 2,000 energies).
+ * @param materialPath where the material stands in what was asked, for faults
+ * @throws ProblemError invalid for a material that cannot be or an energy outside the table, notFound for an unknown material
+ */
 export function computeConstants(
   request: ConstantsRequest,
   tables: ScatteringTables,
   lookup: MaterialLookup,
+  materialPath = "/material",
 ): ConstantsAnswer {
   const tabulation = request.tabulation ?? DEFAULT_TABULATION;
   const energiesKeV = energiesOf(request.energiesKeV);
   refuseOutside(energiesKeV, tables, tabulation);
-  const { material, label, formula } = attributed(() => resolveMaterial(request.material, lookup));
+  const { material, label, formula } = attributed(materialPath, () => resolveMaterial(request.material, lookup));
   const energiesEv = energiesKeV.map(tidyEv);
   const rows = valueRows(material, energiesEv, tables, tabulation);
   const range: [number, number] = [
@@ -74,24 +81,32 @@ export function computeConstants(
     edges: edgesOf(material, tables, range).map(({ element, shell, energyEv }) => ({
       element,
       shell,
-      energyKeV: kevFromEv(energyEv),
+      energyKeV: tidyKeV(energyEv),
     })),
     rows: rows.map((row, index) => rowAnswer(row, energiesKeV[index] as number)),
     citation: citation(tables.version, tabulation),
   };
 }
 
-/** Many requests, each answered or refused by itself. Yields between items, so that a long batch does not hold others up. */
+/**
+ * Many requests, each answered or refused by itself. Yields between items, so that a long batch does not hold others up.
+ * @param items as they were sent: each is judged by itself, so that one fault does not spoil the others
+ * @throws ProblemError invalid where all items together ask for too many rows
+ */
 export async function computeBatch<Refusal>(
-  items: readonly ConstantsRequest[],
+  items: readonly unknown[],
   tables: ScatteringTables,
   lookup: MaterialLookup,
   refuse: (error: unknown, index: number) => Refusal,
 ): Promise<(ConstantsAnswer | Refusal)[]> {
-  const rows = items.reduce(
-    (sum, { energiesKeV }) => sum + (Array.isArray(energiesKeV) ? energiesKeV.length : energiesKeV.count),
-    0,
-  );
+  const read = items.map((item, index) => {
+    try {
+      return { request: validate(constantsRequestSchema, item, "The item is not valid.") };
+    } catch (error) {
+      return { refusal: refuse(error, index) };
+    }
+  });
+  const rows = read.reduce((sum, { request }) => sum + (request ? countOf(request.energiesKeV) : 0), 0);
   if (rows > CONSTANTS_LIMITS.batchRows) {
     throw new ProblemError(
       "invalid",
@@ -108,9 +123,13 @@ export async function computeBatch<Refusal>(
     );
   }
   const results: (ConstantsAnswer | Refusal)[] = [];
-  for (const [index, item] of items.entries()) {
+  for (const [index, { request, refusal }] of read.entries()) {
+    if (!request) {
+      results.push(refusal as Refusal);
+      continue;
+    }
     try {
-      results.push(computeConstants(item, tables, lookup));
+      results.push(computeConstants(request, tables, lookup));
     } catch (error) {
       results.push(refuse(error, index));
     }
@@ -118,6 +137,8 @@ export async function computeBatch<Refusal>(
   }
   return results;
 }
+
+const countOf = (energies: Energies): number => (Array.isArray(energies) ? energies.length : energies.count);
 
 /** The tabulated factors of one element. @throws ProblemError notFound */
 export function elementFactors(
@@ -144,7 +165,7 @@ export function elementFactors(
     table: { version: tables.version, tabulation },
     symbol: element.symbol,
     atomicNumber: element.atomicNumber,
-    energiesKeV: Array.from(factors.energiesEv, kevFromEv),
+    energiesKeV: Array.from(factors.energiesEv, tidyKeV),
     f1: nullable(factors.f1),
     f2: nullable(factors.f2),
     coherentCm2PerG: perGram(factors.coherentM2),
@@ -152,13 +173,16 @@ export function elementFactors(
     energyAbsorptionCm2PerG: perGram(factors.energyAbsorptionM2),
     edges: (tables.shells.get(element.atomicNumber) ?? []).map(({ shell, edgeEnergyEv }) => ({
       shell,
-      energyKeV: kevFromEv(edgeEnergyEv),
+      energyKeV: tidyKeV(edgeEnergyEv),
     })),
   };
 }
 
 // 33.1694 keV is 33169.4 eV: the product's last bit must not push a value over an edge.
 const tidyEv = (energyKeV: number): number => Number(evFromKev(energyKeV).toPrecision(14));
+
+// 108.368 eV is 0.108368 keV, not 0.10836799999999999.
+const tidyKeV = (energyEv: number): number => Number(kevFromEv(energyEv).toPrecision(14));
 
 function rowAnswer(row: ReturnType<typeof valueRows>[number], energyKeV: number): ConstantsAnswer["rows"][number] {
   const values = row.constants && valuesOf(row.constants);
@@ -206,14 +230,14 @@ function refuseOutside(energiesKeV: readonly number[], tables: ScatteringTables,
 }
 
 /** Faults of the material get their place in the request. */
-function attributed<T>(resolve: () => T): T {
+function attributed<T>(materialPath: string, resolve: () => T): T {
   try {
     return resolve();
   } catch (error) {
     if (!(error instanceof StatementError)) throw error;
     const { path, code, message } = error;
     throw new ProblemError(code === "materialNotFound" ? "notFound" : "invalid", message, {
-      errors: [{ path: `/material${path}`, code, message }],
+      errors: [{ path: materialPath + path, code, message }],
     });
   }
 }

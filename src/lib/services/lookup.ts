@@ -6,7 +6,7 @@ import { readRecipe } from "#src/lib/lookup/recipe.ts";
 import { type View, viewOf } from "#src/lib/lookup/view.ts";
 import type { MaterialLookup } from "#src/lib/materials/resolve.ts";
 import { tableInfo, type TableInfo } from "#src/lib/tables/info.ts";
-import { allMaterials, searchMaterials } from "./materials.ts";
+import { allMaterials, getMaterial, searchMaterials } from "./materials.ts";
 import { getTables } from "./tables.ts";
 
 export interface LookupPage {
@@ -34,8 +34,11 @@ export function handbookFinder(): MaterialFinder {
   return finder;
 }
 
-/** Handbook compositions by id, for statements in requests. */
-export const materialLookup: MaterialLookup = (materialId, revision) => handbookFinder().lookup(materialId, revision);
+/** Handbook compositions by id, for statements in requests; null for a revision that there is not. */
+export const materialLookup: MaterialLookup = (materialId, revision) => {
+  const kept = getMaterial(materialId);
+  return kept && (revision === undefined || revision === kept.revision) ? kept : null;
+};
 
 function namedIn(question: Question, handbook: MaterialFinder): KnownMaterial[] {
   const words = [

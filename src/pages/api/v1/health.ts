@@ -22,4 +22,4 @@ export const GET: APIRoute = async ({ url, locals }) => {
   });
 };
 
-export const ALL = otherMethods("GET");
+export const ALL = otherMethods({ GET });

@@ -4,4 +4,4 @@ import { openApiDocument } from "#src/lib/http/openapi.ts";
 
 export const GET = apiRoute({ cache: () => "revalidate", answer: () => openApiDocument() });
 
-export const ALL = otherMethods("GET");
+export const ALL = otherMethods({ GET });

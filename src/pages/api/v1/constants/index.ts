@@ -17,7 +17,8 @@ export const GET = apiRoute({
       materialId === undefined ? { formula, densityGCm3 } : { materialId },
       "The material is not valid.",
     );
-    return computeConstants({ material, ...rest }, await getTables(), materialLookup);
+    // In a query the material's fields are keys of their own.
+    return computeConstants({ material, ...rest }, await getTables(), materialLookup, "");
   },
 });
 
@@ -26,4 +27,4 @@ export const POST = apiRoute({
   answer: async ({ body }) => computeConstants(body, await getTables(), materialLookup),
 });
 
-export const ALL = otherMethods("GET", "POST");
+export const ALL = otherMethods({ GET, POST });

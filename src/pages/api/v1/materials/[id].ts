@@ -13,4 +13,4 @@ export const GET = apiRoute({
   },
 });
 
-export const ALL = otherMethods("GET");
+export const ALL = otherMethods({ GET });

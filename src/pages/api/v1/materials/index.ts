@@ -9,4 +9,4 @@ export const GET = apiRoute({
   answer: ({ query: { query, limit = 50, cursor } }) => listMaterials({ query, limit, cursor }),
 });
 
-export const ALL = otherMethods("GET");
+export const ALL = otherMethods({ GET });
