@@ -145,7 +145,7 @@ describe("shedding", () => {
         await answer.text();
       }
     };
-    await Promise.all([...Array.from({ length: 12 }, () => keepAsking("/slow")), keepAsking("/api/v1/health")]);
+    await Promise.all([...Array.from({ length: 40 }, () => keepAsking("/slow")), keepAsking("/api/v1/health")]);
     expect([...statuses["/slow"]].sort()).toEqual([200, 503]);
     expect([...statuses["/api/v1/health"]]).toEqual([200]);
     expect(refused!.headers.get("retry-after")).toBe("2");

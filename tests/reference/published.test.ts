@@ -22,6 +22,7 @@ import {
   wavelengthM,
 } from "#src/lib/physics/index.ts";
 import { committedTables } from "#data/build/committed-tables.ts";
+import { relativisticLimit } from "#data/build/dispersion.ts";
 import { publishedMaterial } from "./materials.ts";
 
 interface Entry {
@@ -117,12 +118,7 @@ const COMPUTED: Readonly<Record<string, (entry: Entry) => number>> = {
   absorption_edge_L2: edge("L2"),
   absorption_edge_L3: edge("L3"),
   emission_line_energy: line,
-  Zstar_high_energy_limit_of_f1: ({ material }) => {
-    // f1 reaches Z* from above as (E_K/E)² ln E; the last row of the table is close enough for light elements, and the
-    // remainder is what the dispersion integral still holds there, which the tolerance of 1e-4 does not cover for heavy ones.
-    const { atomicNumber } = elementBySymbol(material)!;
-    return atomicNumber - (atomicNumber / 82.5) ** 2.37;
-  },
+  Zstar_high_energy_limit_of_f1: ({ material }) => relativisticLimit(elementBySymbol(material)!.atomicNumber),
   density: (entry) => densityOf(entry),
   Z_over_A: (entry) =>
     electronDensityPerM3(publishedMaterial(entry.material)) /
