@@ -4,16 +4,19 @@ import { fileURLToPath } from "node:url";
 import { elementByNumber } from "#src/lib/physics/elements.ts";
 import { buildElement, RANGE_EV } from "./epdl97.ts";
 import { rawCrossSections, Relaxation } from "./relaxation.ts";
-import { RAW_FILES, type RawFile, rawSha256, rawText, sha256, storedElements } from "./sources.ts";
+import { originOf, RAW_FILES, rawText, sha256, storedElements } from "./sources.ts";
 import { readSpecFile } from "./spec-file.ts";
 import { atomicNumberOf, factorsRows } from "./stored-factors.ts";
 
 const OUT = fileURLToPath(new URL("../tables/", import.meta.url));
 /** Raised whenever a number in the tables changes. */
-const VERSION = "1.0.0";
+const VERSION = "1.1.0";
 const DIGITS = 6;
+/** Energies stand as their sources have them, to 0.01 eV or better: an edge near 100 keV needs more than six digits. */
+const ENERGY_DIGITS = 9;
 
-const printed = (value: number | null): string => (value === null ? "" : String(Number(value.toPrecision(DIGITS))));
+const printed = (value: number | null, digits: number): string =>
+  value === null ? "" : String(Number(value.toPrecision(digits)));
 
 interface Written {
   sha256: string;
@@ -22,7 +25,10 @@ interface Written {
 const written: Record<string, Written> = {};
 
 function write(name: string, head: readonly string[], rows: readonly (readonly (string | number | null)[])[]): void {
-  const lines = rows.map((row) => row.map((value) => (typeof value === "string" ? value : printed(value))).join("\t"));
+  const digits = head.map((column) => (column.endsWith("nergyEv") ? ENERGY_DIGITS : DIGITS));
+  const lines = rows.map((row) =>
+    row.map((value, index) => (typeof value === "string" ? value : printed(value, digits[index]!))).join("\t"),
+  );
   const text = `${head.join("\t")}\n${lines.join("\n")}\n`;
   writeFileSync(OUT + name, text);
   written[name] = { sha256: sha256(text), rows: rows.length };
@@ -42,6 +48,7 @@ const relaxation = new Relaxation({
   kRates: rawText("kRates"),
   lConstants: rawText("lConstants"),
   lRates: rawText("lRates"),
+  mConstants: rawText("mConstants"),
 });
 const scans = timed("Reading the cross sections", () => readSpecFile(rawText("crossSections")));
 const numbers = Array.from({ length: 98 }, (_, index) => index + 1);
@@ -77,17 +84,18 @@ timed("Building epdl97", () => {
 });
 
 const STORED = {
-  henke93: { file: "henke", rangeEv: [30, 30_000] },
-  chantler95: { file: "chantler", rangeEv: [10, 433_000] },
+  // Read off the files: their smallest values, repeated wherever the published one is negative or absent.
+  henke93: { file: "henke", rangeEv: [30, 30_000], clippedAt: { f1: 1e-4, f2: 1e-6 } },
+  chantler95: { file: "chantler", rangeEv: [10, 433_000], clippedAt: { f1: 1e-6, f2: 1e-6 } },
 } as const;
-for (const [key, { file, rangeEv }] of Object.entries(STORED)) {
+for (const [key, { file, rangeEv, clippedAt }] of Object.entries(STORED)) {
   timed(`Reading ${key}`, () => {
     const rows = Object.entries(storedElements(file))
       .map(([symbol, element]) => ({ atomicNumber: atomicNumberOf(symbol), element }))
       .filter(({ atomicNumber }) => atomicNumber <= 92)
       .sort((a, b) => a.atomicNumber - b.atomicNumber)
       .flatMap(({ atomicNumber, element }) =>
-        factorsRows(element, rangeEv).map((row) => [atomicNumber, row.energyEv, row.side, row.f1, row.f2]),
+        factorsRows(element, rangeEv, clippedAt).map((row) => [atomicNumber, row.energyEv, row.side, row.f1, row.f2]),
       );
     write(`${key}.tsv`, ["atomicNumber", "energyEv", "side", "f1", "f2"], rows);
   });
@@ -112,7 +120,8 @@ timed("Writing shells and lines", () => {
 
 const manifest = {
   version: VERSION,
-  units: "energies in eV, f1 and f2 in electrons, cross sections in barn per atom, six significant digits",
+  units:
+    "energies in eV, f1 and f2 in electrons, cross sections in barn per atom, six significant digits, energies to 0.01 eV",
   files: written,
   tabulations: {
     epdl97: {
@@ -131,9 +140,8 @@ const manifest = {
       source: "Chantler, J. Phys. Chem. Ref. Data 24, 71 (1995)",
     },
   },
-  sources: (Object.keys(RAW_FILES) as RawFile[])
-    .filter((file) => file !== "totals")
-    .map((file) => ({ ...RAW_FILES[file], sha256: rawSha256(file) })),
+  // The totals serve the tests only.
+  sources: RAW_FILES.filter((file) => file !== "totals").map(originOf),
 };
 writeFileSync(`${OUT}manifest.json`, `${JSON.stringify(manifest, null, 2)}\n`);
 for (const [name, { rows }] of Object.entries(written)) console.log(`${name}: ${rows} rows`);

@@ -5,13 +5,18 @@ import { type AlignedPhotoelectric, alignEdges, type RawCrossSections, type Subs
 import { dispersionNodes, f1At } from "./dispersion.ts";
 import { escapingFluorescenceEv, kleinNishinaEnergyShare, type RelaxationData } from "./energy-absorption.ts";
 import { GridFunction, type Side } from "./grid-function.ts";
-import { type Row, thin } from "./thin.ts";
+import { densify, EXEMPT_EV, type Row, thin } from "./thin.ts";
 
 export const RANGE_EV: readonly [number, number] = [100, 450_000];
 
-/** Candidates for the thinned grid: this many a decade, and these distances from every jump in eV. */
-const CANDIDATES_PER_DECADE = 400;
-const EDGE_DISTANCES_EV = [0.5, 1, 1.5, 2.001, 2.5, 3, 4, 5, 6.5, 8, 10, 13, 16, 20, 26, 34, 44, 58, 76, 100];
+/** First candidates for the thinned grid stand this close, as a share of the energy … */
+const STEP = 10 ** (1 / 100) - 1;
+/** … and of the distance to the nearest jump, towards which f1 runs as its logarithm. */
+const STEP_NEAR_JUMP = 0.1;
+/** Distances from a jump, eV, inside the band where no accuracy is stated. */
+const INNERMOST_EV = [0.5, 1, 1.5];
+/** Energies this close to a jump are kept to 0.01 eV, as the jumps themselves; others to six digits. */
+const FINE_WITHIN_EV = 100;
 /** At an edge f1 runs to a logarithmic pole; its two rows carry f1 at this distance from it. */
 const AT_EDGE_EV = 0.1;
 
@@ -58,38 +63,52 @@ export function buildElement({ atomicNumber, raw, measuredEv, relaxation }: Elem
     };
   };
 
-  const jumps = [...aligned.jumpsEv]
-    .filter((energy) => energy > RANGE_EV[0] && energy < RANGE_EV[1])
-    .sort((a, b) => a - b);
-  const borders = [RANGE_EV[0], ...jumps, RANGE_EV[1]];
+  const jumps = [...aligned.jumpsEv].sort((a, b) => a - b);
+  const borders = [RANGE_EV[0], ...jumps.filter((energy) => energy > RANGE_EV[0] && energy < RANGE_EV[1]), RANGE_EV[1]];
   const rows: Row[] = [];
   for (let index = 0; index + 1 < borders.length; index++) {
     const [from, to] = [borders[index]!, borders[index + 1]!];
-    const inner = candidatesBetween(from, to, aligned.energiesEv, jumps);
-    const stretch = [
+    const first = [
       rowAt(from, index === 0 ? "" : "above"),
-      ...inner.map((energy) => rowAt(energy, "")),
+      ...candidatesBetween(from, to, aligned.energiesEv, jumps).map((energy) => rowAt(energy, "")),
       rowAt(to, index + 2 === borders.length ? "" : "below"),
     ];
-    rows.push(...thin(stretch, jumps));
+    // Where f2 has a kink f1 has a cusp, and near jumps it bends: candidates close in there.
+    const candidates = densify(first, jumps, (a, b) => {
+      const energy = printedEnergy(Math.sqrt(a.energyEv * b.energyEv), distanceToJump(a.energyEv, jumps));
+      return energy > a.energyEv && energy < b.energyEv ? rowAt(energy, "") : null;
+    });
+    rows.push(...thin(candidates, jumps));
   }
   return { rows, aligned };
 }
 
-function candidatesBetween(from: number, to: number, tabulated: readonly number[], jumps: readonly number[]): number[] {
-  const found = new Set<number>(tabulated.filter((energy) => energy > from && energy < to));
-  const count = Math.ceil(Math.log10(to / from) * CANDIDATES_PER_DECADE);
-  for (let step = 1; step < count; step++) found.add(from * (to / from) ** (step / count));
-  for (const distance of EDGE_DISTANCES_EV) {
-    if (jumps.includes(from) && from + distance < to) found.add(from + distance);
-    if (jumps.includes(to) && to - distance > from) found.add(to - distance);
+const distanceToJump = (energyEv: number, jumps: readonly number[]): number =>
+  jumps.reduce((least, jump) => Math.min(least, Math.abs(jump - energyEv)), Infinity);
+
+const printedEnergy = (energyEv: number, distanceEv: number): number =>
+  distanceEv <= FINE_WITHIN_EV ? Math.round(energyEv * 100) / 100 : Number(energyEv.toPrecision(6));
+
+/** Energies between two borders: the source's own and a walk that slows towards jumps, also those outside the range. */
+export function candidatesBetween(
+  from: number,
+  to: number,
+  tabulated: readonly number[],
+  jumps: readonly number[],
+): number[] {
+  const lower = jumps.findLast((jump) => jump <= from) ?? -Infinity;
+  const upper = jumps.find((jump) => jump >= to) ?? Infinity;
+  const distanceOf = (energy: number): number => Math.min(energy - lower, upper - energy);
+  const found = tabulated.filter((energy) => energy > from && energy < to);
+  for (const distance of INNERMOST_EV) found.push(lower + distance, upper - distance);
+  let energy = Math.max(from, lower + EXEMPT_EV);
+  while (energy < Math.min(to, upper - EXEMPT_EV)) {
+    found.push(energy);
+    energy += Math.min(STEP * energy, STEP_NEAR_JUMP * distanceOf(energy));
   }
-  // Rows are printed to six digits: two candidates must not fall on one printed energy, nor on a border's.
-  const printed = new Set<number>([Number(from.toPrecision(6)), Number(to.toPrecision(6))]);
-  return [...found]
-    .sort((a, b) => a - b)
-    .map((energy) => Number(energy.toPrecision(6)))
-    .filter((energy) => energy > from && energy < to && !printed.has(energy) && printed.add(energy));
+  found.push(upper - EXEMPT_EV);
+  const printed = found.map((value) => printedEnergy(value, distanceOf(value)));
+  return [...new Set(printed)].filter((value) => value > from && value < to).sort((a, b) => a - b);
 }
 
 /** The integral must not be taken exactly on a node; f1 is smooth there, so a shift of 1e-9 is of no account. */

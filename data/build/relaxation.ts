@@ -8,6 +8,7 @@ export interface RelaxationFiles {
   readonly kRates: string;
   readonly lConstants: string;
   readonly lRates: string;
+  readonly mConstants: string;
 }
 
 export interface ShellRow {
@@ -30,6 +31,7 @@ export class Relaxation {
   private readonly kRates: SpecScan;
   private readonly l: readonly SpecScan[];
   private readonly lRates: readonly SpecScan[];
+  private readonly m: readonly SpecScan[];
 
   constructor(files: RelaxationFiles) {
     const scans = (text: string): SpecScan[] => readSpecFile(text);
@@ -38,6 +40,7 @@ export class Relaxation {
     this.kRates = scans(files.kRates)[0]!;
     this.l = scans(files.lConstants);
     this.lRates = scans(files.lRates);
+    this.m = scans(files.mConstants);
   }
 
   /** Measured binding energy, eV; 0 where the compilation has none. The file is in keV with five decimals. */
@@ -84,15 +87,16 @@ export class Relaxation {
     };
   }
 
-  /** Shells with a binding energy, highest first; yields of K and L where the source gives one above 0. */
+  /** Shells with a binding energy, highest first; yields of K, L and M where the source gives one above 0. */
   shellsOf(atomicNumber: number): ShellRow[] {
-    const { yields } = this.dataOf(atomicNumber);
+    const yields: Record<string, number> = { ...this.dataOf(atomicNumber).yields };
+    for (const [index, scan] of this.m.entries()) yields[`M${index + 1}`] = lastOf(scan, atomicNumber);
     return this.shellNames()
       .map((shell) => ({
         atomicNumber,
         shell,
         edgeEnergyEv: this.bindingEv(atomicNumber, shell),
-        fluorescenceYield: (yields as Record<string, number>)[shell] || null,
+        fluorescenceYield: yields[shell] || null,
       }))
       .filter((row) => row.edgeEnergyEv > 0)
       .sort((a, b) => b.edgeEnergyEv - a.edgeEnergyEv);

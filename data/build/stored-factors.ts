@@ -1,4 +1,4 @@
-/** Rows of `henke93` and `chantler95`: stored as logarithms; what was clipped at 1e-6 is missing, not small. */
+/** Rows of `henke93` and `chantler95`: stored as logarithms; what was clipped is missing, not small. */
 import { elementBySymbol } from "#src/lib/physics/elements.ts";
 import type { StoredElement } from "./sources.ts";
 
@@ -10,42 +10,37 @@ export interface FactorsRow {
   readonly f2: number | null;
 }
 
-const CLIPPED = Math.log(1e-6);
+/** Values in electrons at which a source clipped its logarithms: f1 cannot be negative there, f2 not vanish. */
+export interface ClippedAt {
+  readonly f1: number;
+  readonly f2: number;
+}
 
 /** exp of a stored logarithm, or null where it was clipped. */
-export function storedValue(logarithm: number): number | null {
-  return logarithm <= CLIPPED + 1e-9 ? null : Math.exp(logarithm);
+export function storedValue(logarithm: number, clippedAt: number): number | null {
+  return logarithm <= Math.log(clippedAt) + 1e-9 ? null : Math.exp(logarithm);
 }
 
 /** Rows inside a range, ascending; an energy that stands twice is an edge. Rows without any value are left out. */
-export function factorsRows(element: StoredElement, rangeEv: readonly [number, number]): FactorsRow[] {
-  const rows = element.energy
+export function factorsRows(
+  element: StoredElement,
+  rangeEv: readonly [number, number],
+  clippedAt: ClippedAt,
+): FactorsRow[] {
+  return element.energy
     .map((energyEv, index) => ({
-      energyEv: Number(energyEv.toPrecision(6)),
-      f1: storedValue(element.f1[index]!),
-      f2: storedValue(element.f2[index]!),
-      index,
+      energyEv,
+      f1: storedValue(element.f1[index]!, clippedAt.f1),
+      f2: storedValue(element.f2[index]!, clippedAt.f2),
     }))
     .filter(({ energyEv, f1, f2 }) => energyEv >= rangeEv[0] && energyEv <= rangeEv[1] && (f1 !== null || f2 !== null))
-    .sort((a, b) => a.energyEv - b.energyEv || a.index - b.index);
-  return (
-    rows
-      // A third row at one energy can only be a rounding of its neighbours: the outermost two stand.
-      .filter(
-        ({ energyEv }, index) => !(rows[index - 1]?.energyEv === energyEv && rows[index + 1]?.energyEv === energyEv),
-      )
-      .map(({ energyEv, f1, f2 }, index, all) => ({
-        energyEv,
-        side:
-          all[index + 1]?.energyEv === energyEv
-            ? ("below" as const)
-            : all[index - 1]?.energyEv === energyEv
-              ? ("above" as const)
-              : "",
-        f1,
-        f2,
-      }))
-  );
+    .sort((a, b) => a.energyEv - b.energyEv)
+    .map(({ energyEv, f1, f2 }, index, all) => ({
+      energyEv,
+      side: all[index + 1]?.energyEv === energyEv ? "below" : all[index - 1]?.energyEv === energyEv ? "above" : "",
+      f1,
+      f2,
+    }));
 }
 
 /** Atomic number of a lower-case symbol. @throws Error where there is none */
