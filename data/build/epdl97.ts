@@ -1,10 +1,10 @@
 /** One element of the `epdl97` tabulation: aligned edges, f2, f1, scattering and energy absorption, thinned to rows. */
 import { AVOGADRO, CLASSICAL_ELECTRON_RADIUS, PLANCK_TIMES_LIGHT } from "#src/lib/physics/constants.ts";
-import { elementByNumber } from "#src/lib/physics/elements.ts";
 import { type AlignedPhotoelectric, alignEdges, type RawCrossSections, type Subshell } from "./align-edges.ts";
 import { dispersionNodes, f1At } from "./dispersion.ts";
 import { escapingFluorescenceEv, kleinNishinaEnergyShare, type RelaxationData } from "./energy-absorption.ts";
 import { GridFunction, type Side } from "./grid-function.ts";
+import { sourceWeight } from "./source-weights.ts";
 import { densify, EXEMPT_EV, type Row, thin } from "./thin.ts";
 
 export const RANGE_EV: readonly [number, number] = [100, 450_000];
@@ -34,7 +34,7 @@ export interface ElementTable {
 
 export function buildElement({ atomicNumber, raw, measuredEv, relaxation }: ElementSource): ElementTable {
   const aligned = alignEdges(raw, measuredEv);
-  const perAtomM2 = (elementByNumber(atomicNumber).standardAtomicWeight / AVOGADRO.value) * 1e-4;
+  const perAtomM2 = (sourceWeight(atomicNumber) / AVOGADRO.value) * 1e-4;
   const f2PerCm2PerGEv = perAtomM2 / (2 * CLASSICAL_ELECTRON_RADIUS.value * PLANCK_TIMES_LIGHT.value);
   const f2At = (energyEv: number, side: Side): number => aligned.at(energyEv, side) * energyEv * f2PerCm2PerGEv;
   const nodes = dispersionNodes(aligned.energiesEv, aligned.jumpsEv, f2At);
