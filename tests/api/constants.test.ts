@@ -1,7 +1,7 @@
 /** The constants endpoints: what they answer, and that it is what the core computes and the document promises. */
 import { describe, expect, it } from "vitest";
 import { committedTables } from "#data/build/committed-tables.ts";
-import { constantsBatchAnswerSchema } from "#src/lib/http/openapi.ts";
+import { constantsBatchAnswerSchema } from "#src/lib/http/operations.ts";
 import {
   compositionOfFormula,
   opticalConstants,

@@ -4,7 +4,7 @@ import { existsSync, readFileSync } from "node:fs";
 import { dirname, join } from "node:path";
 import fc from "fast-check";
 import { beforeAll, afterAll, describe, expect, inject, it } from "vitest";
-import { constantsBatchAnswerSchema } from "#src/lib/http/openapi.ts";
+import { constantsBatchAnswerSchema } from "#src/lib/http/operations.ts";
 import { problemSchema } from "#src/lib/http/problem-schema.ts";
 import { constantsAnswerSchema, type ConstantsAnswer, factorsAnswerSchema } from "#src/lib/schemas/constants.ts";
 import { materialsListSchema } from "#src/lib/schemas/materials-list.ts";

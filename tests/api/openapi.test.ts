@@ -3,7 +3,8 @@ import { readdirSync } from "node:fs";
 import { fileURLToPath } from "node:url";
 import { Validator } from "@seriousme/openapi-schema-validator";
 import { describe, expect, it } from "vitest";
-import { OPERATIONS } from "#src/lib/http/openapi.ts";
+import { z } from "zod";
+import { OPERATIONS } from "#src/lib/http/operations.ts";
 import { call, good, post, WATER } from "#tests/support/api.ts";
 
 const ROUTES = fileURLToPath(new URL("../../src/pages/api/v1/", import.meta.url));
@@ -22,6 +23,24 @@ function servedPaths(): string[] {
     .sort();
 }
 
+interface Described {
+  paths: Record<string, Record<string, DescribedOperation>>;
+  components: { schemas: Record<string, object> };
+}
+interface DescribedOperation {
+  requestBody?: { content: Record<string, { schema: object }> };
+  responses: Record<string, { content: Record<string, { schema: object }> }>;
+}
+
+/** A schema of the served document, as a reader would build one from it. */
+function readerOf(document: Described, schema: object): z.ZodType {
+  const local = (part: object): object =>
+    JSON.parse(JSON.stringify(part).replaceAll("#/components/schemas/", "#/$defs/")) as object;
+  return z.fromJSONSchema({ ...local(schema), $defs: local(document.components.schemas) } as Parameters<
+    typeof z.fromJSONSchema
+  >[0]);
+}
+
 describe("the document", () => {
   it("is valid OpenAPI 3.1", async () => {
     const document = good<object>(await call("/openapi.json"));
@@ -33,6 +52,14 @@ describe("the document", () => {
 
   it("names every served route, and no other", () => {
     expect([...new Set(OPERATIONS.map((operation) => operation.path))].sort()).toEqual(servedPaths());
+  });
+
+  it("describes problems as they are sent", async () => {
+    const document = good<Described>(await call("/openapi.json"));
+    const answer = await post("/constants", {});
+    const { content } = document.paths["/constants"]!["post"]!.responses[String(answer.status)]!;
+    const written = readerOf(document, content["application/problem+json"]!.schema);
+    expect(written.safeParse(JSON.parse(answer.body)).error?.issues ?? []).toEqual([]);
   });
 
   it("refers only to schemas it holds", async () => {
@@ -63,6 +90,7 @@ describe("the document", () => {
         ],
       },
     };
+    const document = good<Described>(await call("/openapi.json"));
     for (const operation of OPERATIONS) {
       const path = operation.parameters.reduce(
         (text, { name, example, in: place }) => (place === "path" ? text.replace(`{${name}}`, example) : text),
@@ -80,8 +108,18 @@ describe("the document", () => {
           : await call(
               `${path}?${operation.id === "getConstants" || operation.id.startsWith("list") || operation.id.startsWith("getElement") ? search : ""}`,
             );
-      const result = operation.answer.safeParse(good(answer));
+      const value = good(answer);
+      const result = operation.answer.safeParse(value);
       expect(result.error?.issues ?? [], operation.id).toEqual([]);
+      const described = document.paths[operation.path]![operation.method]!;
+      const written = readerOf(document, described.responses["200"]!.content["application/json"]!.schema);
+      expect(written.safeParse(value).error?.issues ?? [], `${operation.id}, as described`).toEqual([]);
+      if (operation.method === "post") {
+        const asked = readerOf(document, described.requestBody!.content["application/json"]!.schema);
+        const body = bodies[operation.id] as object;
+        expect(asked.safeParse(body).success, operation.id).toBe(true);
+        expect(asked.safeParse({ ...body, more: 1 }).success, operation.id).toBe(false);
+      }
     }
   });
 });

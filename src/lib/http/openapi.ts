@@ -1,150 +1,11 @@
-/** OpenAPI 3.1 from the operations below and the zod schemas that handlers, forms and tests share. */
+/** OpenAPI 3.1 from the operations and the zod schemas that handlers, forms and tests share. */
 import { z } from "zod";
-import {
-  constantsAnswerSchema,
-  constantsBatchRequestSchema,
-  constantsRequestSchema,
-  factorsAnswerSchema,
-  tabulationSchema,
-} from "#src/lib/schemas/constants.ts";
-import { materialItemSchema, materialsListSchema } from "#src/lib/schemas/materials-list.ts";
-import { healthSchema, problemSchema } from "./problem-schema.ts";
+import { OPERATIONS } from "./operations.ts";
+import { problemSchema } from "./problem-schema.ts";
+import { PROBLEM_KINDS } from "./problems.ts";
 
-type Place = "query" | "path";
-
-interface Parameter {
-  readonly name: string;
-  readonly in: Place;
-  readonly required: boolean;
-  readonly description: string;
-  readonly schema: z.ZodType;
-  readonly example: string;
-}
-
-export interface Operation {
-  readonly method: "get" | "post";
-  readonly path: string;
-  readonly id: string;
-  readonly summary: string;
-  readonly parameters: readonly Parameter[];
-  readonly body?: z.ZodType;
-  readonly answer: z.ZodType;
-  /** Problems beside those every operation may answer. */
-  readonly problems: readonly number[];
-}
-
-const text = (name: string, description: string, example: string, more: Partial<Parameter> = {}): Parameter => ({
-  name,
-  in: "query",
-  required: false,
-  description,
-  example,
-  schema: z.string(),
-  ...more,
-});
-const tabulation = text("tabulation", "Table that gives the values; epdl97 where it is left out.", "epdl97", {
-  schema: tabulationSchema,
-});
-
-export const constantsBatchAnswerSchema = z
-  .strictObject({ results: z.array(z.union([constantsAnswerSchema, problemSchema])) })
-  .meta({ id: "ConstantsBatchAnswer" });
-
-/** Every operation of the API. A route that is served without standing here fails a test. */
-export const OPERATIONS: readonly Operation[] = [
-  {
-    method: "get",
-    path: "/constants",
-    id: "getConstants",
-    summary: "Optical constants of a formula or a kept material",
-    parameters: [
-      text("formula", "IUPAC notation; goes with densityGCm3.", "H2O"),
-      text("densityGCm3", "Density in g/cm³, above 0 and up to 50.", "1"),
-      text("materialId", "Id of a kept material, instead of a formula.", "pmma"),
-      text("energiesKeV", "Energies in keV, parted by commas; one row each, in this order.", "10,20", {
-        required: true,
-      }),
-      tabulation,
-    ],
-    answer: constantsAnswerSchema,
-    problems: [404, 422],
-  },
-  {
-    method: "post",
-    path: "/constants",
-    id: "postConstants",
-    summary: "Optical constants of any stated material: formula, kept material, mixture or solution",
-    parameters: [],
-    body: constantsRequestSchema,
-    answer: constantsAnswerSchema,
-    problems: [404, 413, 415, 422],
-  },
-  {
-    method: "post",
-    path: "/constants/batch",
-    id: "postConstantsBatch",
-    summary: "Many requests at once, each answered or refused by itself",
-    parameters: [],
-    body: constantsBatchRequestSchema,
-    answer: constantsBatchAnswerSchema,
-    problems: [413, 415, 422],
-  },
-  {
-    method: "get",
-    path: "/elements/{symbol}/factors",
-    id: "getElementFactors",
-    summary: "Scattering factors and cross sections of one element, as tabulated",
-    parameters: [
-      text("symbol", "Element symbol.", "Fe", { in: "path", required: true }),
-      tabulation,
-      text("version", "Table version; the answer is then immutable.", "1.0.0"),
-    ],
-    answer: factorsAnswerSchema,
-    problems: [404, 422],
-  },
-  {
-    method: "get",
-    path: "/materials",
-    id: "listMaterials",
-    summary: "Handbook materials, searched by name, formula, other names and tags, best first",
-    parameters: [
-      text("query", "At most 64 characters; one or two wrong letters are forgiven.", "kapton"),
-      text("limit", "From 1 to 100; 50 where it is left out.", "10"),
-      text("cursor", "From the answer before.", ""),
-    ],
-    answer: materialsListSchema,
-    problems: [422],
-  },
-  {
-    method: "get",
-    path: "/materials/{id}",
-    id: "getMaterial",
-    summary: "One material",
-    parameters: [text("id", "Material id.", "pmma", { in: "path", required: true })],
-    answer: materialItemSchema,
-    problems: [404],
-  },
-  {
-    method: "get",
-    path: "/health",
-    id: "getHealth",
-    summary: "Whether the site can answer",
-    parameters: [],
-    answer: healthSchema,
-    problems: [],
-  },
-  {
-    method: "get",
-    path: "/openapi.json",
-    id: "getDocument",
-    summary: "This document",
-    parameters: [],
-    answer: z.looseObject({ openapi: z.string() }),
-    problems: [],
-  },
-];
-
-const EVERYWHERE = [400, 401, 405, 406, 429, 503];
+/** Statuses that every operation may answer with. */
+const EVERYWHERE = [400, 401, 405, 406, 429, 500, 503];
 
 type Json = Record<string, unknown>;
 
@@ -153,30 +14,39 @@ function jsonSchema(schema: z.ZodType, io: "input" | "output", components: Json)
   const { $defs, ...root } = z.toJSONSchema(schema, { io, target: "draft-2020-12", unrepresentable: "any" }) as Json & {
     $defs?: Json;
   };
-  for (const [name, definition] of Object.entries($defs ?? {})) components[named(name)] = cleaned(definition);
+  for (const [name, definition] of Object.entries($defs ?? {})) {
+    // Names that zod makes up are counted anew in every call: two schemas would share one.
+    if (name.startsWith("__")) throw new Error("A schema that refers to itself needs an id (schemas/material.ts).");
+    components[name] = cleaned(definition);
+  }
   const clean = cleaned(root) as Json;
   const id = schema.meta()?.id;
-  if (id === undefined) return clean;
+  // A schema with an id comes either in place or, where it is used within, as a reference to its definition.
+  if (id === undefined || "$ref" in clean) return clean;
   components[id] = clean;
   return { $ref: `#/components/schemas/${id}` };
 }
 
-// zod names definitions without an id "__schema0"; OpenAPI names want letters first.
-const named = (name: string): string => name.replace(/^__schema/, "Part");
-
-function cleaned(node: unknown): unknown {
-  if (Array.isArray(node)) return node.map(cleaned);
+/** Without zod's own marks, references turned to components. Names of properties are kept, whatever they are. */
+function cleaned(node: unknown, areNames = false): unknown {
+  if (Array.isArray(node)) return node.map((each) => cleaned(each));
   if (node === null || typeof node !== "object") return node;
   return Object.fromEntries(
-    Object.entries(node)
-      .filter(([key]) => key !== "$schema" && key !== "$id" && key !== "id" && key !== "~standard")
-      .map(([key, value]) =>
-        key === "$ref" && typeof value === "string"
-          ? [key, value.replace("#/$defs/", "#/components/schemas/").replace("__schema", "Part")]
-          : [key, cleaned(value)],
-      ),
+    Object.entries(node).flatMap(([key, value]): [string, unknown][] => {
+      if (areNames) return [[key, cleaned(value)]];
+      if (MARKS.has(key)) return [];
+      if (key === "$ref") return [[key, String(value).replace("#/$defs/", "#/components/schemas/")]];
+      return [[key, cleaned(value, key === "properties")]];
+    }),
   );
 }
+
+const MARKS = new Set(["$schema", "$id", "id", "~standard"]);
+
+const codesOf = (status: number): string =>
+  Object.entries(PROBLEM_KINDS)
+    .flatMap(([code, kind]) => (kind.status === status ? [code] : []))
+    .join(", ");
 
 export function openApiDocument(): Json {
   const components: Json = {};
@@ -190,7 +60,7 @@ export function openApiDocument(): Json {
       },
     };
     for (const status of [...EVERYWHERE, ...operation.problems].sort())
-      responses[String(status)] = { description: "A problem; see /method/errors", content: problem };
+      responses[String(status)] = { description: `Problem: ${codesOf(status)}. See /method/errors.`, content: problem };
     const path = (paths[operation.path] ??= {});
     path[operation.method] = {
       operationId: operation.id,

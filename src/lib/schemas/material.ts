@@ -33,43 +33,57 @@ const common = {
     .meta({ description: "Share of the volume that is solid, for porous or packed matter; 1 where it is left out." }),
 };
 
-export const formulaMaterialSchema = z.strictObject({
-  formula: z.string().min(1).meta({ description: "IUPAC notation, at most 256 characters: Ca5(PO4)3OH, CuSO4·5H2O." }),
-  densityGCm3: density,
-  ...common,
-});
+export const formulaMaterialSchema = z
+  .strictObject({
+    formula: z
+      .string()
+      .min(1)
+      .meta({ description: "IUPAC notation, at most 256 characters: Ca5(PO4)3OH, CuSO4·5H2O." }),
+    densityGCm3: density,
+    ...common,
+  })
+  .meta({ id: "FormulaMaterial" });
 
-export const keptMaterialSchema = z.strictObject({
-  materialId: z.string().min(1).max(64).meta({ description: "Id of a handbook or team material." }),
-  revision: z.number().int().positive().optional(),
-  ...common,
-});
+export const keptMaterialSchema = z
+  .strictObject({
+    materialId: z.string().min(1).max(64).meta({ description: "Id of a handbook or team material." }),
+    revision: z.number().int().positive().optional(),
+    ...common,
+  })
+  .meta({ id: "KeptMaterial" });
 
 // As a part, a formula needs a density only by volume or where the density of the whole is to be estimated.
-export const formulaPartSchema = formulaMaterialSchema.extend({ densityGCm3: density.optional() });
+export const formulaPartSchema = formulaMaterialSchema
+  .extend({ densityGCm3: density.optional() })
+  .meta({ id: "FormulaPart" });
 
-export const mixtureMaterialSchema = z.strictObject({
-  get components() {
-    return z.array(componentSchema).min(1).max(MATERIAL_LIMITS.components);
-  },
-  basis: z.enum(["mass", "volume", "mole"]),
-  densityGCm3: density.optional(),
-  ...common,
-});
+export const mixtureMaterialSchema = z
+  .strictObject({
+    get components() {
+      return z.array(componentSchema).min(1).max(MATERIAL_LIMITS.components).meta({ id: "Components" });
+    },
+    basis: z.enum(["mass", "volume", "mole"]),
+    densityGCm3: density.optional(),
+    ...common,
+  })
+  .meta({ id: "Mixture" });
 
-export const solutionMaterialSchema = z.strictObject({
-  get solvent() {
-    return partSchema;
-  },
-  get solutes() {
-    return z
-      .array(soluteSchema)
-      .min(1)
-      .max(MATERIAL_LIMITS.components - 1);
-  },
-  densityGCm3: density.optional(),
-  ...common,
-});
+export const solutionMaterialSchema = z
+  .strictObject({
+    get solvent() {
+      return partSchema;
+    },
+    get solutes() {
+      return z
+        .array(soluteSchema)
+        .min(1)
+        .max(MATERIAL_LIMITS.components - 1)
+        .meta({ id: "Solutes" });
+    },
+    densityGCm3: density.optional(),
+    ...common,
+  })
+  .meta({ id: "Solution" });
 
 const fraction = {
   fraction: z.number().min(0).max(1.001).meta({ description: "Share of the whole; shares sum to 1 within 0.001." }),
@@ -110,35 +124,42 @@ export type MaterialStatement = FormulaMaterial | KeptMaterial | MixtureMaterial
 
 const PART_FORMS = "a part: formula, or materialId, or components with basis, or solvent with solutes";
 
-const partSchema: z.ZodType<PartStatement> = z.lazy(() =>
-  z.union([formulaPartSchema, keptMaterialSchema, mixtureMaterialSchema, solutionMaterialSchema], {
-    error: PART_FORMS,
-  }),
-);
-const componentSchema: z.ZodType<Component> = z.lazy(() =>
-  z.union(
-    [
-      formulaPartSchema.extend(fraction),
-      keptMaterialSchema.extend(fraction),
-      mixtureMaterialSchema.extend(fraction),
-      solutionMaterialSchema.extend(fraction),
-    ],
-    { error: `${PART_FORMS}; each with fraction` },
-  ),
-) as z.ZodType<Component>;
-const soluteSchema: z.ZodType<Solute> = z.lazy(() =>
-  z.union(
-    [
-      formulaPartSchema.extend(concentration),
-      keptMaterialSchema.extend(concentration),
-      mixtureMaterialSchema.extend(concentration),
-      solutionMaterialSchema.extend(concentration),
-    ],
-    { error: `${PART_FORMS}; each with mgPerMl` },
-  ),
-) as z.ZodType<Solute>;
+const partSchema: z.ZodType<PartStatement> = z
+  .lazy(() =>
+    z.union([formulaPartSchema, keptMaterialSchema, mixtureMaterialSchema, solutionMaterialSchema], {
+      error: PART_FORMS,
+    }),
+  )
+  .meta({ id: "Part" });
+const componentSchema: z.ZodType<Component> = z
+  .lazy(() =>
+    z.union(
+      [
+        formulaPartSchema.extend(fraction),
+        keptMaterialSchema.extend(fraction),
+        mixtureMaterialSchema.extend(fraction),
+        solutionMaterialSchema.extend(fraction),
+      ],
+      { error: `${PART_FORMS}; each with fraction` },
+    ),
+  )
+  .meta({ id: "Component" }) as z.ZodType<Component>;
+const soluteSchema: z.ZodType<Solute> = z
+  .lazy(() =>
+    z.union(
+      [
+        formulaPartSchema.extend(concentration),
+        keptMaterialSchema.extend(concentration),
+        mixtureMaterialSchema.extend(concentration),
+        solutionMaterialSchema.extend(concentration),
+      ],
+      { error: `${PART_FORMS}; each with mgPerMl` },
+    ),
+  )
+  .meta({ id: "Solute" }) as z.ZodType<Solute>;
 
-export const materialSchema: z.ZodType<MaterialStatement> = z.union(
-  [formulaMaterialSchema, keptMaterialSchema, mixtureMaterialSchema, solutionMaterialSchema],
-  { error: "a material: formula with densityGCm3, or materialId, or components with basis, or solvent with solutes" },
-);
+export const materialSchema: z.ZodType<MaterialStatement> = z
+  .union([formulaMaterialSchema, keptMaterialSchema, mixtureMaterialSchema, solutionMaterialSchema], {
+    error: "a material: formula with densityGCm3, or materialId, or components with basis, or solvent with solutes",
+  })
+  .meta({ id: "MaterialStatement" });
