@@ -42,7 +42,7 @@ describe("a look-up", () => {
   async function choose(text: string, pick: RegExp): Promise<void> {
     await blank(page, "material").click();
     await page.keyboard.type(text);
-    const option = page.getByRole("option", { name: pick });
+    const option = page.getByRole("option", { name: pick }).first();
     await option.waitFor();
     // To the option by arrows alone.
     for (let step = 0; step < 8; step++) {
