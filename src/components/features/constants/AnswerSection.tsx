@@ -132,13 +132,17 @@ function AnswerActions({
   question: Question;
   version: string;
 }) {
-  const [copied, setCopied] = useState(false);
+  const [copied, setCopied] = useState<"no" | "yes" | "by hand">("no");
   const query = writeQuestion(question).toString();
   const sentence = `${main.label}, ${formatGiven(main.densityGCm3)} g/cm³${main.densityEstimated ? " (estimate)" : ""}, at ${formatGiven(row.energyKeV)} keV: δ ${significantText(values.delta)}, β ${significantText(values.beta)}, μ ${significantText(values.muTotalPerCm)} cm⁻¹ (total), δ/β ${significantText(values.deltaOverBeta)}. Rimelight tables ${version}, EPDL97 (Cullen, Hubbell, Kissel 1997), ${new Date().toISOString().slice(0, 10)}.`;
   const copy = async (): Promise<void> => {
-    await navigator.clipboard.writeText(sentence);
-    setCopied(true);
-    setTimeout(() => setCopied(false), 2500);
+    // The clipboard is open to pages served safely only; elsewhere the sentence is shown, to be copied by hand.
+    const done = await navigator.clipboard?.writeText(sentence).then(
+      () => true,
+      () => false,
+    );
+    setCopied(done === true ? "yes" : "by hand");
+    if (done === true) setTimeout(() => setCopied("no"), 2500);
   };
   return (
     <div className="actions">
@@ -152,7 +156,7 @@ function AnswerActions({
         Save JSON
       </a>
       <span className="note" role="status">
-        {copied ? "Copied." : ""}
+        {copied === "yes" ? "Copied." : copied === "by hand" ? sentence : ""}
       </span>
     </div>
   );
