@@ -60,6 +60,34 @@ function splitIntoSymbols(letters: string): string | null {
   return best[letters.length]?.text ?? null;
 }
 
+export interface Notation {
+  readonly what: string;
+  /** The formula with it left out. */
+  readonly without: string;
+}
+
+/**
+ * What belongs to the writing of chemistry but not to a formula here: the n of a polymer's unit, a state such as (s) or (aq),
+ * an oxidation number such as (III). `index` is where a small letter was met, or where a bracket opens.
+ */
+export function unwantedNotation(formula: string, index: number): Notation | null {
+  const rest = formula.slice(index);
+  if (rest === "n" && index > 0) return { what: "n, for any number of units,", without: formula.slice(0, index) };
+  const state = /^(?:s|l|g|aq)\)/.exec(rest)?.[0];
+  if (state !== undefined && index > 1 && formula[index - 1] === "(")
+    return {
+      what: `the state (${state}`,
+      without: formula.slice(0, index - 1) + formula.slice(index + state.length),
+    };
+  const oxidation = /^\([IV]{1,4}\)/.exec(rest)?.[0];
+  if (oxidation !== undefined && index > 0)
+    return {
+      what: `the oxidation number ${oxidation}`,
+      without: formula.slice(0, index) + formula.slice(index + oxidation.length),
+    };
+  return null;
+}
+
 const LOOK_ALIKES: Readonly<Record<string, string>> = {
   // Cyrillic
   А: "A", В: "B", С: "C", Е: "E", Н: "H", І: "I", К: "K", М: "M", О: "O", Р: "P", Ѕ: "S", Т: "T", Х: "X", У: "Y",

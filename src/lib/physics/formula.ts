@@ -6,7 +6,7 @@
  */
 import { elementByNumber, elementBySymbol } from "./elements.ts";
 import { FormulaError } from "./errors.ts";
-import { foreignLetter, mendCase, nearSymbols } from "./formula-hints.ts";
+import { foreignLetter, mendCase, nearSymbols, unwantedNotation } from "./formula-hints.ts";
 
 export const FORMULA_LIMITS = {
   characters: 256,
@@ -208,6 +208,7 @@ class Parser {
         const atomicNumber = this.symbol();
         add(level.atoms, atomicNumber, this.count() ?? 1);
       } else if (character === "(" || character === "[") {
+        this.refuseNotation(this.index);
         stack.push({ opening: character, openedAt: this.index, atoms: new Map() });
         this.index++;
       } else if (character === ")" || character === "]") {
@@ -351,6 +352,18 @@ class Parser {
     );
   }
 
+  // Fe(III)2O3 would otherwise be read as an iodide, and the n of a polymer be offered as nitrogen.
+  private refuseNotation(index: number): void {
+    const found = unwantedNotation(this.characters.join(""), index);
+    if (!found) return;
+    throw this.fault(
+      "unexpectedCharacter",
+      index,
+      `Leave ${found.what} at ${index + 1} out: only elements and their counts are read.`,
+      [found.without],
+    );
+  }
+
   private unexpected(character: string): FormulaError {
     const position = this.index + 1;
     if (character === "e" && isDigit(this.peek(-1))) {
@@ -361,6 +374,7 @@ class Parser {
       );
     }
     if (isLower(character)) {
+      this.refuseNotation(this.index);
       const mended = mendCase(this.characters.join(""));
       const hint = mended ? ` Did you mean ${mended}?` : " Write for example Co for cobalt, CO for carbon monoxide.";
       return this.fault(

@@ -65,6 +65,45 @@ describe("parseFormula", () => {
     expect(fault("Hx2O").message).toBe("Unknown element 'Hx' at 1; did you mean He or Hg?");
   });
 
+  it.each([
+    ["(C2H4)n", 7, "(C2H4)"],
+    ["C5H8O2n", 7, "C5H8O2"],
+    ["Fe2O3(s)", 7, "Fe2O3"],
+    ["NaCl(aq)", 6, "NaCl"],
+    ["Fe(III)2O3", 3, "Fe2O3"],
+    ["Cu(I)2O", 3, "Cu2O"],
+    ["V(IV)O2", 2, "VO2"],
+  ])("does not take the notation in %s for elements", (text, position, without) => {
+    expect(fault(text)).toMatchObject({ code: "unexpectedCharacter", position, suggestions: [without] });
+    expect(() => parseFormula(without)).not.toThrow();
+  });
+
+  it("still reads iodine and vanadium in brackets with counts", () => {
+    expect([...parseFormula("Hg(I2)2").atoms]).toEqual([
+      [80, 1],
+      [53, 4],
+    ]);
+    expect([...parseFormula("(VO4)2").atoms]).toEqual([
+      [23, 2],
+      [8, 8],
+    ]);
+  });
+
+  it("takes linear time", () => {
+    const start = performance.now();
+    for (const text of [
+      "(".repeat(256),
+      "a".repeat(1e6),
+      `H${" ·".repeat(120)}`,
+      `H0.${"0".repeat(250)}1`,
+      "C".repeat(256),
+      " ".repeat(1e6),
+    ])
+      for (let turn = 0; turn < 20; turn++)
+        expect(() => parseFormula(text === "C".repeat(256) ? `${text}!` : text)).toThrow(FormulaError);
+    expect(performance.now() - start).toBeLessThan(2000);
+  });
+
   it("offers only formulas it would read", () => {
     for (const text of ["h2o", "caco3", "nacl", "CuSO4.5H2O", "H2 O"]) {
       for (const suggestion of fault(text).suggestions)
