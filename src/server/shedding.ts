@@ -10,14 +10,14 @@ import { ProblemError } from "#src/lib/http/problems.ts";
 export interface SheddingLimits {
   readonly underWay: number;
   readonly turnMs: number;
+  /** So many requests within one turn may be one person's, and get through however long it lasts. */
+  readonly onePerson: number;
 }
 
-/** Fifty busy connections fit in; pages of 5 ms then answer within 0.4 s. */
-export const SHEDDING_LIMITS: SheddingLimits = { underWay: 64, turnMs: 250 };
+/** Fifty busy connections fit in; pages of 5 ms then answer within 0.4 s. Browsers open six connections. */
+export const SHEDDING_LIMITS: SheddingLimits = { underWay: 64, turnMs: 250, onePerson: 6 };
 /** Health and built files cost little and keep people informed: they go last, at this many times the limits. */
 const LAST = 4;
-/** A long turn is refused for only where this share of the limit is under way: on a slow machine one person must get through. */
-const CROWD = 4;
 const TICK_MS = 20;
 const HEALTH = "/api/v1/health";
 
@@ -28,8 +28,11 @@ export function createShedding(
 ): (response: ServerResponse, path: string, isFile: boolean) => void {
   const underWay = new Set<ServerResponse>();
   let turn = performance.now();
+  /** Requests reached in the present turn. */
+  let reached = 0;
   const begin = (): void => {
     turn = performance.now();
+    reached = 0;
   };
   const ticking = setInterval(begin, TICK_MS);
   ticking.unref();
@@ -39,8 +42,11 @@ export function createShedding(
   return (response, path, isFile) => {
     const share = isFile || path === HEALTH ? LAST : 1;
     const late = performance.now() - turn - TICK_MS;
-    const crowded = underWay.size >= (limits.underWay * share) / CROWD;
-    if ((late > limits.turnMs * share && crowded) || underWay.size >= limits.underWay * share) {
+    reached++;
+    if (
+      (late > limits.turnMs * share && reached > limits.onePerson * share) ||
+      underWay.size >= limits.underWay * share
+    ) {
       throw new ProblemError("overloaded", "Too much is asked at once. Try again in a few seconds.", {
         headers: { "retry-after": "2" },
       });

@@ -40,7 +40,7 @@ export async function startFront({ settings, ...given }: Given = {}): Promise<Ru
     clientFolder: null,
     log: pino({ level: "silent" }),
     // The tests' own work delays this process too.
-    shedding: { underWay: 1000, turnMs: 60_000 },
+    shedding: { underWay: 1000, turnMs: 60_000, onePerson: 6 },
     ...given,
     settings: { publicUrl: baseUrl, trustProxy: null, limitsFactor: 1000, ...settings },
   });
