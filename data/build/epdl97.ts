@@ -32,7 +32,14 @@ export interface ElementTable {
   readonly aligned: AlignedPhotoelectric;
 }
 
-export function buildElement({ atomicNumber, raw, measuredEv, relaxation }: ElementSource): ElementTable {
+export interface ElementCalculation {
+  readonly aligned: AlignedPhotoelectric;
+  /** Everything at one energy in eV, not interpolated; `side` says which side of a jump. */
+  readonly rowAt: (energyEv: number, side: Row["side"]) => Row;
+}
+
+/** The full calculation of one element, from which the rows of its table are chosen. */
+export function calculateElement({ atomicNumber, raw, measuredEv, relaxation }: ElementSource): ElementCalculation {
   const aligned = alignEdges(raw, measuredEv);
   const perAtomM2 = (sourceWeight(atomicNumber) / AVOGADRO.value) * 1e-4;
   const f2PerCm2PerGEv = perAtomM2 / (2 * CLASSICAL_ELECTRON_RADIUS.value * PLANCK_TIMES_LIGHT.value);
@@ -62,7 +69,12 @@ export function buildElement({ atomicNumber, raw, measuredEv, relaxation }: Elem
       energyAbsorptionBarn: absorbed * barn,
     };
   };
+  return { aligned, rowAt };
+}
 
+/** The rows of one element's table: both sides of every jump, and as few others as its accuracy needs. */
+export function buildElement(source: ElementSource): ElementTable {
+  const { aligned, rowAt } = calculateElement(source);
   const jumps = [...aligned.jumpsEv].sort((a, b) => a - b);
   const borders = [RANGE_EV[0], ...jumps.filter((energy) => energy > RANGE_EV[0] && energy < RANGE_EV[1]), RANGE_EV[1]];
   const rows: Row[] = [];
