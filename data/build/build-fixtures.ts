@@ -6,7 +6,7 @@ import { mkdirSync, writeFileSync } from "node:fs";
 import { fileURLToPath } from "node:url";
 import { rawCrossSections, Relaxation } from "./relaxation.ts";
 import { rawText, storedElements } from "./sources.ts";
-import { column, readSpecFile, specHead } from "./spec-file.ts";
+import { column, readSpecFile } from "./spec-file.ts";
 
 const OUT = fileURLToPath(new URL("../../tests/reference/fixtures/", import.meta.url));
 /** A light element; a K edge that moves; L edges that move; another weight in the source, and M edges besides. */
@@ -52,15 +52,15 @@ function writeElements(): void {
   }
 }
 
-/** Verbatim heads with the rows of one element, a few of them where there are many: what the reader of the files is tested on. */
+/** Verbatim rows, a few of them where there are many, which the readers of the files are tested on; heads stand in data/sources. */
 function writeExcerpts(): void {
-  const excerpt = (text: string, keep: (row: readonly string[], scan: number) => boolean): string => {
+  const excerpt = (source: string, text: string, keep: (row: readonly string[], scan: number) => boolean): string => {
     let scan = 0;
     const lines = text.split("\n").filter((line) => {
       if (line.startsWith("#S ")) scan = Number(line.split(" ")[1]);
-      return (line.startsWith("#") && scan === 0) || line === "" || keep(line.trim().split(/\s+/), scan);
+      return scan > 0 && (line === "" || keep(line.trim().split(/\s+/), scan));
     });
-    return `${lines
+    return `#U00 Excerpt. Head and credit lines: data/sources/${source}/SOURCE.md\n\n${lines
       .join("\n")
       .replaceAll(/\n{3,}/g, "\n\n")
       .trimEnd()}\n`;
@@ -70,7 +70,7 @@ function writeExcerpts(): void {
   const write = (name: string, text: string): void => writeFileSync(`${OUT}source-text/${name}.txt`, text);
   write(
     "crossSections",
-    excerpt(rawText("crossSections"), ([first = ""], scan) => {
+    excerpt("epdl97", rawText("crossSections"), ([first = ""], scan) => {
       if (scan !== element) return false;
       return first.startsWith("#") || (Number(first) >= fromKeV && Number(first) <= toKeV);
     }),
@@ -78,7 +78,11 @@ function writeExcerpts(): void {
   for (const file of ["bindingEnergies", "kConstants", "kRates", "lConstants", "lRates", "mConstants"] as const)
     write(
       file,
-      excerpt(rawText(file), ([first = ""]) => first.startsWith("#") || first === "13" || first === "79"),
+      excerpt(
+        file === "bindingEnergies" ? "larkins77" : "eadl97",
+        rawText(file),
+        ([first = ""]) => first.startsWith("#") || first === "13" || first === "79",
+      ),
     );
 }
 
@@ -112,7 +116,7 @@ function writeTotals(): void {
     `${OUT}berger-hubbell.json`,
     `{
  "source": "M. J. Berger, J. H. Hubbell, Photon cross sections on a personal computer, NBSIR 87-3597 (1987): total attenuation with coherent scattering",
- "file": "XCOM_CrossSections.dat of the Debian package python-fisx-common, column of totals",
+ "file": "see data/sources/berger-hubbell87, column of totals",
  "date": "2026-12-01",
  "units": "cm2/g",
  "energiesKeV": [${energiesKeV.join(", ")}],
@@ -124,8 +128,8 @@ ${totals.join(",\n")}
   );
 }
 
-console.log(specHead(rawText("crossSections")).split("\n")[0]);
 writeElements();
 writeExcerpts();
 writeStored();
 writeTotals();
+console.log("The fixtures stand in tests/reference/fixtures.");

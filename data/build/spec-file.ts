@@ -27,15 +27,6 @@ export function readSpecFile(text: string): SpecScan[] {
   return scans;
 }
 
-/** The head of a file, which carries its credit lines. */
-export function specHead(text: string): string {
-  return text
-    .slice(0, text.indexOf("\n#S "))
-    .split("\n")
-    .filter((line) => line.startsWith("#"))
-    .join("\n");
-}
-
 /** Column by label. @throws Error where it is missing */
 export function column(scan: SpecScan, label: string): number[] {
   const at = scan.labels.findIndex(
