@@ -6,6 +6,7 @@ import {
   groupByTag,
   groupId,
   heading,
+  listHref,
   type ListedMaterial,
 } from "#src/components/site/materials/listing.ts";
 
@@ -53,6 +54,11 @@ describe("the handbook's list", () => {
     expect(foundText(1, "argon", null)).toBe("1 material matches “argon”, best first.");
     expect(foundText(12, "resin", "polymer")).toBe("12 materials match “resin” under “polymer”, best first.");
     expect(foundText(0, "xyzzy", null)).toBe("Nothing matches “xyzzy”.");
+  });
+  test("has one address for each way to ask for it", () => {
+    expect(listHref({})).toBe("/materials");
+    expect(listHref({ tag: "contrast agent" })).toBe("/materials?tag=contrast+agent");
+    expect(listHref({ query: "a&b", tag: "gas", all: true })).toBe("/materials?query=a%26b&tag=gas&all=yes");
   });
   test("makes ids and headings from tags", () => {
     expect(groupId("Contrast agents, I")).toBe("tag-contrast-agents-i");

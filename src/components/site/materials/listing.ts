@@ -54,6 +54,23 @@ export function compositionParts({ formula, massFractions }: ListedMaterial): Sc
   return [{ text: [...shown, ...(left > 0 ? [`${left}\u00a0more`] : [])].join(", "), script: "base" }];
 }
 
+/** Address of the list for some words, of a kind, in full length. */
+export function listHref({
+  query = "",
+  tag = null,
+  all = false,
+}: {
+  query?: string;
+  tag?: string | null;
+  all?: boolean;
+}): string {
+  const asked = new URLSearchParams();
+  if (query !== "") asked.set("query", query);
+  if (tag !== null) asked.set("tag", tag);
+  if (all) asked.set("all", "yes");
+  return asked.size === 0 ? "/materials" : `/materials?${asked}`;
+}
+
 /** `#` id of a group's heading. */
 export function groupId(tag: string): string {
   return `tag-${tag.toLowerCase().replace(/[^a-z0-9]+/g, "-")}`;

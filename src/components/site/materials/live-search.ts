@@ -4,8 +4,8 @@
  */
 const PAUSE_MS = 160;
 
-/** Ids of the parts that change: what was found in a sentence (read out), and the list. */
-const PARTS = ["found", "results"] as const;
+/** Ids of the parts that change: the kinds with their counts, what was found in a sentence (read out), and the list. */
+const PARTS = ["kinds", "found", "results"] as const;
 
 function start(form: HTMLFormElement, input: HTMLInputElement): void {
   let timer = 0;
