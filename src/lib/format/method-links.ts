@@ -37,7 +37,10 @@ export const NOTE_EXPLANATIONS = {
     text: "Below 1 keV: bonding and structure change what free-atom tables say.",
     anchor: "limits",
   },
-  notInTable: { text: "An element of the material has no value in this table at this energy.", anchor: "tables" },
+  notInTable: {
+    text: "An element of the material has no value in this table at this energy.",
+    anchor: "missing-values",
+  },
   densityEstimated: { text: "The density is an estimate from additive volumes.", anchor: "density" },
 } as const;
 export type NoteCode = keyof typeof NOTE_EXPLANATIONS;

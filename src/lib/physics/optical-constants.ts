@@ -48,8 +48,8 @@ export interface ConstantsOverEnergy {
 
 /**
  * The data files of `henke93` and `chantler95` hold no f2 below 1e-6 electrons. Where EPDL97 says that f2 is that small (twice it,
- * since the tables differ), its value stands in: hydrogen above some 8 keV gives under 0.1 % of any compound's β. A larger
- * missing f2 stays missing.
+ * since the tables differ), its value stands in: hydrogen above some 8 keV gives 0.02 % of a polymer's β, at most 0.3 % of any
+ * compound's (LiH). A larger missing f2 stays missing.
  */
 const NEGLIGIBLE_F2 = 2e-6;
 
