@@ -1,5 +1,6 @@
 /** What every problem document of the site must be, whoever wrote it. */
 import { expect } from "vitest";
+import { FAULT_EXPLANATIONS } from "#src/components/site/method/error-explanations.ts";
 import { PROBLEM_KINDS, type ProblemCode, type ProblemDocument } from "#src/lib/http/problems.ts";
 
 /** Asserts status, type and form of a problem, and that it tells nothing it should not; returns it. */
@@ -19,6 +20,8 @@ export function expectProblem(
   });
   expect(problem.detail).toMatch(/^\S.*[.?]$/s);
   expect(problem.requestId).toMatch(/^[\w-]{8,}$/);
+  // Whatever is asked in a test, the list of errors explains what is said.
+  for (const fault of problem.errors ?? []) expect(Object.keys(FAULT_EXPLANATIONS)).toContain(fault.code);
   expect([...problem.instance].length).toBeLessThanOrEqual(64);
   expect(answer.body).not.toMatch(/\bat .*:\d+:\d+|node_modules|\bSELECT\b|sqlite/i);
   return problem;

@@ -292,3 +292,11 @@ export const FIELD_EXPLANATIONS: Record<Exclude<FieldCode, keyof typeof QUANTITY
   },
   invalid: { means: "The value is not accepted for the reason named.", remedy: "Follow the message." },
 };
+
+/** Every code that `errors[].code` of a problem document can carry, whatever kind of field it stands for. */
+export const FAULT_EXPLANATIONS: Readonly<Record<string, Explanation>> = {
+  ...FIELD_EXPLANATIONS,
+  ...QUANTITY_EXPLANATIONS,
+  ...FORMULA_EXPLANATIONS,
+  ...MATERIAL_EXPLANATIONS,
+};
