@@ -116,6 +116,15 @@ export function rangeText(bounds: readonly [number, number], digits: number = DE
   return `${first} to ${partsText(high)}`;
 }
 
+/** What sets bounds apart: the bounds, or where they are printed alike, by how much of the first the other is apart. */
+export function spreadText(bounds: readonly [number, number], unit = ""): string {
+  const { low, high } = formatRange(bounds);
+  if (low === null || high === null) return "no value";
+  return partsText(low) === partsText(high)
+    ? `spread ${formatPercent(Math.abs(bounds[1] / bounds[0] - 1))}`
+    : `tables: ${rangeText(bounds)}${unit === "" ? "" : `\u00a0${unit}`}`;
+}
+
 /** Integer as Unicode superscript: `−7` becomes `⁻⁷`. */
 export function superscriptText(exponent: number): string {
   const digits = "⁰¹²³⁴⁵⁶⁷⁸⁹";

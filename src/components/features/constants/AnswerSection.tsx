@@ -1,7 +1,7 @@
 /** Values at the question's energy in two groups, phase and absorption, with what the tables say of each other. */
 import { useState } from "react";
 import { ValueGroup } from "#src/components/ui/ValueList.tsx";
-import { NOTE_EXPLANATIONS, methodTopicHref } from "#src/lib/format/method-links.ts";
+import { methodHref, NOTE_EXPLANATIONS, methodTopicHref } from "#src/lib/format/method-links.ts";
 import { formatGiven, formatPercent, significantText } from "#src/lib/format/numbers.ts";
 import { TABULATION_NAMES } from "#src/lib/format/tabulations.ts";
 import { readableLength } from "#src/lib/format/units.ts";
@@ -93,7 +93,7 @@ function SpreadSentence({ row }: { row: RowView }) {
       {spread ? (
         <>
           {`${covering === 3 ? "The three" : "The two"} tables that cover this energy differ by ${formatPercent(spreadShare(spread.delta, values.delta))} in δ, ${formatPercent(spreadShare(spread.beta, values.beta))} in β and ${formatPercent(spreadShare(spread.muTotalPerCm, values.muTotalPerCm))} in μ. `}
-          <a href={methodTopicHref("tables")}>What that means</a>
+          <a href={methodHref("spread")}>What that means</a>
         </>
       ) : (
         "Only one table covers this energy, so no spread can be given."

@@ -8,6 +8,7 @@ import {
   formatSignedPercent,
   formatSignificant,
   rangeText,
+  spreadText,
   significantText,
 } from "#src/lib/format/numbers.ts";
 
@@ -96,6 +97,9 @@ describe("other numbers", () => {
     expect(rangeText([9.9e-8, 1.01e-7], 3)).toBe(`9.90${SPACE}×${SPACE}10⁻⁸ to 1.01${SPACE}×${SPACE}10⁻⁷`);
     expect(rangeText([0.728, 0.76], 3)).toBe("0.728 to 0.760");
     expect(rangeText([Number.NaN, 1])).toBe("no value");
+    expect(spreadText([39.23, 94.76], "1/cm")).toBe(`tables: 39.23 to 94.76${SPACE}1/cm`);
+    expect(spreadText([1.50301e-6, 1.50318e-6])).toBe(`spread 0.011${SPACE}%`);
+    expect(spreadText([Number.NaN, 1])).toBe("no value");
   });
   test("counts are grouped", () => {
     expect(formatCount(1234567)).toBe(`1${THIN}234${THIN}567`);
