@@ -1,7 +1,7 @@
 /** Values at the question's energy in two groups, phase and absorption, with what the tables say of each other. */
 import { useState } from "react";
 import { ValueGroup } from "#src/components/ui/ValueList.tsx";
-import { methodHref, NOTE_EXPLANATIONS, methodTopicHref } from "#src/lib/format/method-links.ts";
+import { methodHref, NOTE_EXPLANATIONS } from "#src/lib/format/method-links.ts";
 import { formatGiven, formatPercent, significantText } from "#src/lib/format/numbers.ts";
 import { TABULATION_NAMES } from "#src/lib/format/tabulations.ts";
 import { readableLength } from "#src/lib/format/units.ts";
