@@ -25,3 +25,30 @@ export * from "./dose.ts";
 
 // Two materials
 export * from "./pair.ts";
+
+// Geometry, shapes and transfer
+export * from "./geometry.ts";
+export * from "./shapes.ts";
+export { type Band, type BandKind, frequencyBand } from "./band.ts";
+export { absorptionSums, bandSums, type BandSums, type BeamContrast, type BeamTerm } from "./transfer.ts";
+export * from "./detector.ts";
+
+// Plans: one point, the plane, the ranking
+export * from "./plan/task.ts";
+export { type Beam, beamsOf } from "./plan/beam.ts";
+export * from "./plan/gains.ts";
+export {
+  defaultProjections,
+  firstReversal,
+  type Forbidden,
+  leastDetailM,
+  leastSourceDistanceM,
+  nearFieldMeasure,
+} from "./plan/point.ts";
+export * from "./plan/grid.ts";
+export { type PointFigures, type Technique } from "./plan/figures.ts";
+export { computePlane, type Grid, isAllowed, type Plane } from "./plan/plane.ts";
+export { type Plateau, type Why } from "./plan/select.ts";
+export { contrastProfile } from "./plan/profile.ts";
+export { contrastUncertainty, type PlanWarningCode, type Warning, WARNING_LIMITS } from "./plan/warnings.ts";
+export * from "./plan/rank.ts";
