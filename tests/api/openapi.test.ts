@@ -83,6 +83,34 @@ describe("the document", () => {
         },
         energiesKeV: { from: 5, to: 40, count: 7 },
       },
+      evaluatePlan: {
+        feature: { material: { materialId: "pmma" }, shape: "fibre", sizeUm: 20 },
+        host: { material: WATER, thicknessMm: 5 },
+        setup: { setupId: "fine-parallel" },
+        use: "direct",
+        energyKeV: 20,
+        distanceM: 0.3,
+      },
+      rankPlan: {
+        feature: { material: { materialId: "pmma" }, shape: "layer", sizeUm: 20, widthUm: 10 },
+        host: { material: WATER, thicknessMm: 5 },
+        layers: [{ material: { materialId: "polypropylene" }, thicknessMm: 1, position: "before" }],
+        setup: {
+          sourceDistanceM: 30,
+          sourceFwhmUm: 50,
+          detectorFwhmUm: 2,
+          pixelUm: 1,
+          efficiency: { scintillator: { formula: "CsI", densityGCm3: 4.51 }, thicknessUm: 20 },
+          fluxPerSMm2: [
+            [8, 1e10],
+            [40, 2e10],
+          ],
+          energiesKeV: { from: 10, to: 40, count: 12 },
+          distancesM: [0.1, 0.3],
+        },
+        use: "tomography",
+        limits: { doseGy: 100, transmission: [0.1, 0.9] },
+      },
       postConstantsBatch: {
         items: [
           { material: WATER, energiesKeV: [20] },

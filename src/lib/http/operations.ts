@@ -8,6 +8,8 @@ import {
   tabulationSchema,
 } from "#src/lib/schemas/constants.ts";
 import { materialItemSchema, materialsListSchema } from "#src/lib/schemas/materials-list.ts";
+import { evaluateAnswerSchema, rankAnswerSchema } from "#src/lib/schemas/plan-answer.ts";
+import { evaluateRequestSchema, exampleSetupsSchema, rankRequestSchema } from "#src/lib/schemas/plan.ts";
 import { healthSchema, problemSchema } from "./problem-schema.ts";
 
 type Place = "query" | "path";
@@ -123,6 +125,36 @@ export const OPERATIONS: readonly Operation[] = [
     parameters: [text("id", "Material id.", "pmma", { in: "path", required: true })],
     answer: materialItemSchema,
     problems: [404],
+  },
+  {
+    method: "post",
+    path: "/plans/evaluate",
+    id: "evaluatePlan",
+    summary: "Every figure of one energy at one distance, also where the use or a limit forbids it",
+    parameters: [],
+    body: evaluateRequestSchema,
+    answer: evaluateAnswerSchema,
+    problems: [404, 413, 415, 422],
+  },
+  {
+    method: "post",
+    path: "/plans/rank",
+    id: "rankPlan",
+    summary:
+      "Energies and distances ranked for two materials in a sample on a setup, phase contrast against absorption",
+    parameters: [],
+    body: rankRequestSchema,
+    answer: rankAnswerSchema,
+    problems: [404, 413, 415, 422],
+  },
+  {
+    method: "get",
+    path: "/setups/examples",
+    id: "listExampleSetups",
+    summary: "Invented example setups, whose ids stand for their figures in plans",
+    parameters: [],
+    answer: exampleSetupsSchema,
+    problems: [],
   },
   {
     method: "get",

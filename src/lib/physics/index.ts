@@ -42,6 +42,8 @@ export {
   firstReversal,
   type Forbidden,
   leastDetailM,
+  type Lane,
+  laneMaker,
   leastSourceDistanceM,
   nearFieldMeasure,
 } from "./plan/point.ts";
@@ -49,6 +51,7 @@ export * from "./plan/grid.ts";
 export { type PointFigures, type Technique } from "./plan/figures.ts";
 export { computePlane, type Grid, isAllowed, type Plane } from "./plan/plane.ts";
 export { type Plateau, type Why } from "./plan/select.ts";
-export { contrastProfile } from "./plan/profile.ts";
-export { contrastUncertainty, type PlanWarningCode, type Warning, WARNING_LIMITS } from "./plan/warnings.ts";
+export { contrastProfile, largestContrast } from "./plan/profile.ts";
+export { type Check, contrastUncertainty, type PlanWarningCode, WARNING_LIMITS } from "./plan/warnings.ts";
 export * from "./plan/rank.ts";
+export * from "./plan/working.ts";

@@ -3,7 +3,7 @@
  * Nothing here judges the text; read-question.ts does.
  */
 import { DEFAULT_TABULATION, TABULATION_KEYS, type TabulationKey } from "#src/lib/physics/index.ts";
-import { OBJECTIVES, SHAPES, USES } from "#src/lib/schemas/plan.ts";
+import { OBJECTIVES, SHAPES, USES } from "#src/lib/schemas/plan-choices.ts";
 import { MIXTURE_BASES, type MixtureBasisChoice } from "#src/lib/lookup/question.ts";
 
 export type Shape = (typeof SHAPES)[number];

@@ -3,7 +3,7 @@
  * a units library in the browser, which would weigh more than the rest of the page; a test holds every factor to mathjs.
  */
 
-export type Dimension = "energy" | "length" | "density" | "fraction" | "concentration";
+export type Dimension = "energy" | "length" | "density" | "fraction" | "concentration" | "dose" | "time" | "flux";
 
 interface UnitEntry {
   readonly factor: number;
@@ -52,6 +52,30 @@ export const UNITS: Readonly<Record<Dimension, Readonly<Record<string, UnitEntry
     "g/L": unit(1, "g/l"),
     "g/mL": unit(1e3, "g/ml"),
   },
+  dose: {
+    Gy: unit(1, null),
+    mGy: unit(1e-3, null),
+    µGy: unit(1e-6, null),
+    uGy: again(1e-6, null),
+    kGy: unit(1e3, null),
+    MGy: unit(1e6, null),
+  },
+  time: {
+    s: unit(1, "s"),
+    ms: unit(1e-3, "ms"),
+    min: unit(60, "minute"),
+    h: unit(3600, "hour"),
+  },
+  /** Photons per second and m². */
+  flux: {
+    "/s/mm2": unit(1e6, null),
+    "1/s/mm2": again(1e6, null),
+    "/(smm2)": again(1e6, null),
+    "/s/cm2": unit(1e4, null),
+    "/s/m2": unit(1, null),
+    "/s/µm2": unit(1e12, null),
+    "/s/um2": again(1e12, null),
+  },
 };
 
 /** Units that are never read, known only so that a message can say what they measure. */
@@ -61,11 +85,9 @@ export const FOREIGN_UNITS: Readonly<Record<string, string>> = {
   mg: "mass",
   L: "volume",
   mL: "volume",
-  s: "time",
   K: "temperature",
   "°C": "temperature",
-  Gy: "dose",
-  mGy: "dose",
+  Sv: "dose equivalent",
   Hz: "frequency",
 };
 

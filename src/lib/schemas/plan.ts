@@ -2,19 +2,7 @@
 import { z } from "zod";
 import { tabulationSchema } from "./constants.ts";
 import { materialSchema } from "./material.ts";
-
-export const PLAN_LIMITS = {
-  energies: 200,
-  distances: 200,
-  points: 20_000,
-  layers: 10,
-  fluxRows: 2000,
-  nearField: 1.5708,
-} as const;
-
-export const USES = ["absorption", "direct", "retrieval", "tomography"] as const;
-export const OBJECTIVES = ["dose", "time", "fluence"] as const;
-export const SHAPES = ["sphere", "fibre", "layer"] as const;
+import { OBJECTIVES, PLAN_LIMITS, SHAPES, USES } from "./plan-choices.ts";
 
 const micrometres = (what: string, low = 0.001): z.ZodNumber =>
   z
@@ -118,20 +106,21 @@ const keptSetup = z
   .meta({ id: "KeptSetup" });
 const SETUP_FORMS = "a setup: setupId, or its figures";
 
-export const rankSetupSchema = z
-  .union(
-    [
-      keptSetup,
-      z
-        .strictObject({ ...instrument, energiesKeV: energyChoiceSchema, distancesM: distanceChoiceSchema })
-        .meta({ id: "StatedSetup" }),
-    ],
-    { error: SETUP_FORMS },
-  )
-  .meta({ id: "RankSetup" });
+const statedSetup = z
+  .strictObject({ ...instrument, energiesKeV: energyChoiceSchema, distancesM: distanceChoiceSchema })
+  .meta({ id: "StatedSetup" });
+
+export const rankSetupSchema = z.union([keptSetup, statedSetup], { error: SETUP_FORMS }).meta({ id: "RankSetup" });
 export const evaluateSetupSchema = z
   .union([keptSetup, z.strictObject(instrument).meta({ id: "StatedInstrument" })], { error: SETUP_FORMS })
   .meta({ id: "EvaluateSetup" });
+
+/** Example setups, as a list. */
+export const exampleSetupsSchema = z
+  .strictObject({
+    items: z.array(z.strictObject({ id: z.string(), name: z.string(), about: z.string(), setup: statedSetup })),
+  })
+  .meta({ id: "ExampleSetups" });
 
 export const featureSchema = z
   .strictObject({

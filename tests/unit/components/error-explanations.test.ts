@@ -6,6 +6,7 @@ import {
   FIELD_EXPLANATIONS,
   FORMULA_EXPLANATIONS,
   MATERIAL_EXPLANATIONS,
+  PLAN_EXPLANATIONS,
   PROBLEM_EXPLANATIONS,
   QUANTITY_EXPLANATIONS,
 } from "#src/components/site/method/error-explanations.ts";
@@ -13,7 +14,16 @@ import { PROBLEM_KINDS } from "#src/lib/http/problems.ts";
 
 const SOURCE = join(import.meta.dirname, "../../../src");
 /** Where codes that reach people are made. */
-const FOLDERS = ["lib/http", "lib/schemas", "lib/services", "lib/materials", "lib/quantities", "lib/physics", "server"];
+const FOLDERS = [
+  "lib/http",
+  "lib/schemas",
+  "lib/services",
+  "lib/materials",
+  "lib/plans",
+  "lib/quantities",
+  "lib/physics",
+  "server",
+];
 /** zod's own word for an issue whose code stands in its params. */
 const NOT_OURS = new Set(["custom"]);
 /** A code as it is written where a fault is made: `code: "x"`, `told("x"`, `fault("x"`, or before `codeOf` is asked. */
@@ -53,7 +63,13 @@ test("every code that an answer can carry is explained", () => {
 
 test("every kind of problem is explained, and no field's code is explained twice", () => {
   expect(Object.keys(PROBLEM_EXPLANATIONS)).toEqual(Object.keys(PROBLEM_KINDS));
-  const groups = [FIELD_EXPLANATIONS, QUANTITY_EXPLANATIONS, FORMULA_EXPLANATIONS, MATERIAL_EXPLANATIONS];
+  const groups = [
+    FIELD_EXPLANATIONS,
+    QUANTITY_EXPLANATIONS,
+    FORMULA_EXPLANATIONS,
+    MATERIAL_EXPLANATIONS,
+    PLAN_EXPLANATIONS,
+  ];
   const all = groups.flatMap((group) => Object.keys(group));
   expect(all.filter((code, place) => all.indexOf(code) !== place)).toEqual([]);
 });

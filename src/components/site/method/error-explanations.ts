@@ -294,7 +294,52 @@ export const FIELD_EXPLANATIONS: Record<Exclude<FieldCode, keyof typeof QUANTITY
 };
 
 /** Every code that `errors[].code` of a problem document can carry, whatever kind of field it stands for. */
+/** Faults of a stated plan. */
+export const PLAN_EXPLANATIONS: Readonly<Record<string, Explanation>> = {
+  featureTooLarge: {
+    means: "The feature is longer along the beam than its host is thick.",
+    remedy: "Make the feature smaller or the host thicker.",
+  },
+  sourceInsideSample: {
+    means: "The source would stand inside the sample or a layer before it.",
+    remedy: "Give at least half the host and the layers before it as the source distance.",
+  },
+  fluxMissing: {
+    means: "The plan is to be ranked by time, but the flux is not known.",
+    remedy: "Give the flux, or rank by dose or fluence.",
+  },
+  planeTooLarge: {
+    means: "Energies times distances are more points than one request ranks.",
+    remedy: "Take fewer energies or distances: at most 20,000 points together.",
+  },
+  notInTable: {
+    means: "The tabulation has no values of one of the materials at this energy.",
+    remedy: "Take another energy or another tabulation.",
+  },
+  setupNotFound: {
+    means: "No setup has this id.",
+    remedy: "Take one of /api/v1/setups/examples, or state the setup's figures.",
+  },
+  useNotOffered: {
+    means: "That use of the images is not ranked yet.",
+    remedy: "Ask for absorption, direct, retrieval or tomography.",
+  },
+  notForThisShape: {
+    means: "A measure was given that the shape does not have.",
+    remedy: "Leave it out: spheres have a diameter only, fibres no width.",
+  },
+  energiesNotRising: {
+    means: "The rows of a flux curve do not rise in energy.",
+    remedy: "Sort the rows by energy, each energy once.",
+  },
+  logOfZero: {
+    means: "A range that begins at 0 cannot have even steps in the logarithm.",
+    remedy: "Take linear spacing, or begin above 0.",
+  },
+};
+
 export const FAULT_EXPLANATIONS: Readonly<Record<string, Explanation>> = {
+  ...PLAN_EXPLANATIONS,
   ...FIELD_EXPLANATIONS,
   ...QUANTITY_EXPLANATIONS,
   ...FORMULA_EXPLANATIONS,

@@ -19,7 +19,7 @@ import {
   rankedSignalM2,
 } from "./point.ts";
 import type { PlanTask } from "./task.ts";
-import { type Warning, warningsOf } from "./warnings.ts";
+import { type Check, checksOf } from "./warnings.ts";
 
 export type Technique = "phase" | "absorption";
 
@@ -54,7 +54,7 @@ export interface PointFigures {
   readonly cnrContactPerPixel: number | null;
   readonly gain2d: number;
   readonly gainCt: number;
-  readonly warnings: readonly Warning[];
+  readonly checks: readonly Check[];
 }
 
 const scratch = { first: 0, second: 0 };
@@ -118,7 +118,7 @@ export function pointFigures(
       countsPerPixel === null ? null : Math.abs(beam.absorptionPerM) * shape.sizeM * Math.sqrt(countsPerPixel),
     gain2d: gains.image,
     gainCt: gains.tomography,
-    warnings: warningsOf({
+    checks: checksOf({
       task: asAbsorption,
       lane,
       beam,

@@ -2,9 +2,10 @@
 import { FREE_ATOM_LIMIT_EV, type Edge } from "../edges.ts";
 import { FWHM_PER_SIGMA } from "../geometry.ts";
 import type { Beam } from "./beam.ts";
-import { EARLY_ZERO_BELOW, firstReversal, type Lane } from "./point.ts";
+import { candidateBandEv } from "./grid.ts";
+import { EARLY_ZERO_BELOW, firstReversal, type Lane, leastDetailM } from "./point.ts";
 import { largestContrast } from "./profile.ts";
-import { DEFAULT_NEAR_FIELD_LIMIT, type PlanTask } from "./task.ts";
+import { closestDistanceM, DEFAULT_NEAR_FIELD_LIMIT, type PlanTask } from "./task.ts";
 
 export type PlanWarningCode =
   | "transmissionLow"
@@ -25,8 +26,10 @@ export type PlanWarningCode =
   | "fewCountsPerProjection"
   | "insideSample";
 
-export interface Warning {
+/** A thing that was checked. Those that do not hold are the point's warnings. */
+export interface Check {
   readonly code: PlanWarningCode;
+  readonly holds: boolean;
   /** What was found, and what it should stay within; in the unit that the code implies (SI). */
   readonly value: number;
   readonly limit: number;
@@ -62,83 +65,68 @@ export function contrastUncertainty({ sample }: PlanTask, beam: Beam): number {
   return moved === 0 ? 0 : moved / Math.abs(beam.deltaDelta);
 }
 
-export function warningsOf(point: Point): Warning[] {
-  const { task, lane, beam, nearEdge, countsPerPixel } = point;
+/** Everything that is checked at a point, in the order in which it is told. */
+export function checksOf(point: Point): Check[] {
+  const { task, lane, beam, nearEdge, countsPerPixel, countsDecide, measure } = point;
   const { geometry } = lane;
-  const found: Warning[] = [];
-  const warn = (code: PlanWarningCode, value: number, limit: number, holds: boolean): void => {
-    if (!holds) found.push({ code, value, limit });
-  };
-  const { transmission } = beam;
   const withPhase = task.use !== "absorption";
   const filtered = task.use === "retrieval" || task.use === "tomography";
-  if (lane.insideSample)
-    found.push({ code: "insideSample", value: geometry.distanceM, limit: task.sample.hostThicknessM / 2 });
-  if (nearEdge)
-    found.push({ code: "nearEdge", value: Math.abs(beam.energyEv - nearEdge.energyEv), limit: 0, edge: nearEdge });
-  warn("belowOneKeV", beam.energyEv, FREE_ATOM_LIMIT_EV, beam.energyEv >= FREE_ATOM_LIMIT_EV);
-  if (lane.undersampled || lane.ranked === null)
-    found.push({ code: "undersampled", value: geometry.pixelM, limit: leastPixel(task) });
-  if (task.use === "direct")
-    warn(
-      "contrastReversal",
-      point.measure,
-      firstReversal(beam.gamma),
-      !(point.measure > 0 && point.measure >= firstReversal(beam.gamma)),
-    );
-  if (filtered)
-    warn(
-      "nearFieldLeft",
-      point.measure,
-      DEFAULT_NEAR_FIELD_LIMIT,
-      point.measure <= DEFAULT_NEAR_FIELD_LIMIT * (1 + 1e-9),
-    );
-  if (withPhase && beam.gamma !== null && beam.gamma < 0 && (filtered || -beam.gamma < EARLY_ZERO_BELOW))
-    found.push({ code: "opposedPair", value: beam.gamma, limit: 0 });
-  if (withPhase) {
-    const matched = contrastUncertainty(task, beam);
-    warn("nearlyMatched", matched, WARNING_LIMITS.nearlyMatched, matched <= WARNING_LIMITS.nearlyMatched);
-    warnOfTheory(point, warn, filtered);
-  }
-  warn("transmissionLow", transmission, WARNING_LIMITS.transmissionLow, transmission >= WARNING_LIMITS.transmissionLow);
-  warn(
-    "transmissionHigh",
-    transmission,
-    WARNING_LIMITS.transmissionHigh,
-    transmission <= WARNING_LIMITS.transmissionHigh,
-  );
-  warn("sourceBlur", geometry.sourceSigmaM, geometry.detectorSigmaM, geometry.sourceSigmaM <= geometry.detectorSigmaM);
-  if (point.countsDecide) found.push({ code: "countFloor", value: task.minimumCounts, limit: task.minimumCounts });
-  if (task.use === "tomography" && countsPerPixel !== null)
-    warn(
-      "fewCountsPerProjection",
-      countsPerPixel,
-      WARNING_LIMITS.countsPerProjection,
-      countsPerPixel >= WARNING_LIMITS.countsPerProjection,
-    );
-  return found;
+  const { transmission, energyEv } = beam;
+  const detailM = leastDetailM(task);
+  const checks: (Check | null)[] = [
+    check("insideSample", geometry.distanceM, closestDistanceM(task.sample), !lane.insideSample),
+    nearEdge && {
+      ...check("nearEdge", Math.abs(energyEv - nearEdge.energyEv), bandOfEdge(nearEdge, task), false),
+      edge: nearEdge,
+    },
+    atLeast("belowOneKeV", energyEv, FREE_ATOM_LIMIT_EV),
+    check("undersampled", geometry.pixelM, detailM / 3, !lane.undersampled && lane.ranked !== null),
+    task.use === "direct"
+      ? check(
+          "contrastReversal",
+          measure,
+          firstReversal(beam.gamma),
+          !(measure > 0 && measure >= firstReversal(beam.gamma)),
+        )
+      : null,
+    filtered ? atMost("nearFieldLeft", measure, DEFAULT_NEAR_FIELD_LIMIT) : null,
+    withPhase && beam.gamma !== null && (filtered || Math.abs(beam.gamma) < EARLY_ZERO_BELOW)
+      ? check("opposedPair", beam.gamma, 0, beam.gamma >= 0)
+      : null,
+    withPhase ? atMost("nearlyMatched", contrastUncertainty(task, beam), WARNING_LIMITS.nearlyMatched) : null,
+    ...(withPhase ? checksOfTheory(task, lane, beam, filtered) : []),
+    atLeast("transmissionLow", transmission, WARNING_LIMITS.transmissionLow),
+    atMost("transmissionHigh", transmission, WARNING_LIMITS.transmissionHigh),
+    atMost("sourceBlur", geometry.sourceSigmaM, geometry.detectorSigmaM),
+    check("countFloor", task.minimumCounts, task.minimumCounts, !countsDecide),
+    task.use === "tomography" && countsPerPixel !== null
+      ? atLeast("fewCountsPerProjection", countsPerPixel, WARNING_LIMITS.countsPerProjection)
+      : null,
+  ];
+  return checks.filter((each) => each !== null);
 }
 
-function warnOfTheory(
-  { task, lane, beam }: Point,
-  warn: (code: PlanWarningCode, value: number, limit: number, holds: boolean) => void,
-  filtered: boolean,
-): void {
-  const { geometry } = lane;
-  const { sample } = task;
-  const contrast = largestContrast(sample.shape, geometry, beam);
-  warn("linearTheoryLeft", contrast, WARNING_LIMITS.linearContrast, contrast <= WARNING_LIMITS.linearContrast);
-  const shift = geometry.effectiveDistanceM * Math.abs(beam.deltaDelta);
-  const blur = Math.max(geometry.sigmaM, geometry.pixelM / FWHM_PER_SIGMA);
-  warn("refractionShift", shift, blur, shift <= blur);
-  const widening = Math.sqrt(beam.wavelengthM * sample.hostThicknessM);
-  const half = 0.5 * Math.max(geometry.sigmaM * FWHM_PER_SIGMA, geometry.pixelM);
-  warn("thickSample", widening, half, widening <= half);
+const bandOfEdge = ({ energyEv }: Edge, { setup }: PlanTask): number => candidateBandEv(energyEv, setup.bandwidth);
+
+const check = (code: PlanWarningCode, value: number, limit: number, holds: boolean): Check => ({
+  code,
+  holds,
+  value,
+  limit,
+});
+const SLACK = 1 + 1e-9;
+const atMost = (code: PlanWarningCode, value: number, limit: number): Check =>
+  check(code, value, limit, value <= limit * SLACK);
+const atLeast = (code: PlanWarningCode, value: number, limit: number): Check =>
+  check(code, value, limit, value >= limit / SLACK);
+
+function checksOfTheory({ sample }: PlanTask, { geometry }: Lane, beam: Beam, filtered: boolean): (Check | null)[] {
+  const blurM = Math.max(geometry.sigmaM, geometry.pixelM / FWHM_PER_SIGMA);
   const shiftRad = ((2 * Math.PI) / beam.wavelengthM) * Math.abs(beam.deltaDelta) * sample.shape.sizeM;
-  if (filtered) warn("phaseWrap", shiftRad, Math.PI, shiftRad <= Math.PI);
-}
-
-function leastPixel({ sample: { shape }, use }: PlanTask): number {
-  if (shape.kind !== "layer") return shape.sizeM / 3;
-  return (use === "tomography" ? Math.min(shape.sizeM, shape.widthM) : shape.widthM) / 3;
+  return [
+    atMost("linearTheoryLeft", largestContrast(sample.shape, geometry, beam), WARNING_LIMITS.linearContrast),
+    atMost("refractionShift", geometry.effectiveDistanceM * Math.abs(beam.deltaDelta), blurM),
+    atMost("thickSample", Math.sqrt(beam.wavelengthM * sample.hostThicknessM), 0.5 * FWHM_PER_SIGMA * blurM),
+    filtered ? atMost("phaseWrap", shiftRad, Math.PI) : null,
+  ];
 }

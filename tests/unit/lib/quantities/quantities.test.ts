@@ -10,6 +10,9 @@ const SI: Readonly<Record<Dimension, string | null>> = {
   density: "kg/m^3",
   fraction: null,
   concentration: "kg/m^3",
+  dose: null,
+  time: "s",
+  flux: null,
 };
 
 const energies = (text: string) => parseEnergies(text, { defaultUnit: "keV" });
@@ -33,7 +36,17 @@ describe("units", () => {
         compared++;
       }
     }
-    expect(compared).toBeGreaterThan(18);
+    expect(compared).toBeGreaterThan(22);
+  });
+
+  it("of dose and flux, which mathjs does not have, are their prefixes", () => {
+    const read = (text: string, dimension: Dimension): number => parseQuantity(text, dimension, { defaultUnit: "" });
+    expect(["2 Gy", "2 mGy", "2 µGy", "2 uGy", "2 kGy", "2 MGy"].map((text) => read(text, "dose"))).toEqual([
+      2, 2e-3, 2e-6, 2e-6, 2e3, 2e6,
+    ]);
+    expect(
+      ["3 /s/m2", "3 /s/cm²", "3 /s/mm2", "3 1/s/mm2", "3 /(s mm2)", "3 /s/µm2"].map((text) => read(text, "flux")),
+    ).toEqual([3, 3e4, 3e6, 3e6, 3e6, 3e12]);
   });
 });
 

@@ -16,6 +16,9 @@ const DEFAULTS: Readonly<Record<Dimension, string>> = {
   density: "g/cm3",
   fraction: "%",
   concentration: "mg/mL",
+  dose: "Gy",
+  time: "s",
+  flux: "/s/mm2",
 };
 
 function refusal(read: () => unknown): QuantityError {
