@@ -67,6 +67,7 @@ const MAY_IMPORT = {
     "lib/format",
     "lib/lookup",
     "lib/plans",
+    "lib/workers",
     "lib/http",
     "lib/settings.ts",
   ],

@@ -18,7 +18,7 @@ interface ServeOptions {
 }
 
 /** Pages asked once before anyone is let in: the first answer of a page costs several times the later ones. */
-const WARM_PATHS = ["/", "/api/v1/health", "/constants?formula=H2O&densityGCm3=1"];
+const WARM_PATHS = ["/", "/api/v1/health", "/constants?formula=H2O&densityGCm3=1", "/plan"];
 
 export async function serve({ init, step, say }: ServeOptions): Promise<void> {
   try {
@@ -36,6 +36,11 @@ export async function serve({ init, step, say }: ServeOptions): Promise<void> {
         : `${where} was filled with tables ${version}, ${rows} rows`;
     });
     logConsole(log);
+    // Services start it when the first ranking is asked for (lib/services/plans.ts).
+    (globalThis as { [key: symbol]: unknown })[Symbol.for("rimelight.planWorker")] = new URL(
+      "./plan-worker.mjs",
+      import.meta.url,
+    );
     await step("Pages", async () => {
       const front = await createFront({
         settings,

@@ -19,7 +19,13 @@ const LOOKUP_PAGES = /^\/(constants|materials)?\/?$/;
 const ELEMENTS = /^\/api\/v1\/elements\//;
 
 export const LIMIT_GROUPS: readonly LimitGroup[] = [
-  { name: "rank", perMinute: 120, counts: ({ path }) => /^\/api\/v1\/plans\/rank\/?$/.test(path) },
+  {
+    name: "rank",
+    perMinute: 120,
+    // The plan page ranks on the server when it is asked a question.
+    counts: ({ path, query }) =>
+      /^\/api\/v1\/plans\/rank\/?$/.test(path) || (/^\/plan(\/view\.json)?\/?$/.test(path) && query.size > 0),
+  },
   {
     name: "evaluate",
     perMinute: 600,

@@ -91,18 +91,20 @@ export async function build() {
   await run(process.execPath, ["node_modules/astro/astro.js", "build"], {
     failed: "The pages could not be built; the lines above say why.",
   });
-  await bundleFront();
+  await bundle("src/server/front.ts", "dist/front.mjs");
+  await bundle("src/lib/workers/plan.server.ts", "dist/plan-worker.mjs");
   const compressed = compressFiles(join(ROOT, "dist", "client"));
   writeFileSync(stampFile, stamp);
   return `built, ${compressed} files compressed`;
 }
 
-async function bundleFront() {
-  const { build: bundle } = await import("esbuild");
-  await bundle({
+/** What runs beside the pages' own build: the front server and the worker that ranks plans. */
+async function bundle(entry, outfile) {
+  const esbuild = await import("esbuild");
+  await esbuild.build({
     absWorkingDir: ROOT,
-    entryPoints: ["src/server/front.ts"],
-    outfile: "dist/front.mjs",
+    entryPoints: [entry],
+    outfile,
     bundle: true,
     packages: "external",
     platform: "node",

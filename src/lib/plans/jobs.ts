@@ -1,13 +1,11 @@
 /** The work of a plan in one call each, with tables as a value: the server's and the browser's workers run the same. */
 import { evaluatePoint, evFromKev, rankPlan, type RankedPlan, type ScatteringTables } from "#src/lib/physics/index.ts";
-import type { MaterialFinder } from "#src/lib/lookup/finder.ts";
 import { type MaterialLookup, StatementError } from "#src/lib/materials/resolve.ts";
 import type { EvaluateRequest, RankRequest } from "#src/lib/schemas/plan.ts";
 import type { EvaluateAnswer, RankAnswer } from "#src/lib/schemas/plan-answer.ts";
 import { evaluateAnswer, rankAnswer } from "./answer.ts";
 import type { PlanFault } from "./faults.ts";
-import { type PlanQuestion } from "./question.ts";
-import { fieldOfPath, readPlan } from "./read-question.ts";
+import { fieldOfPath } from "./read-question.ts";
 import { refuseOutside, resolveGrid, resolvePlan, type ResolvedPlan } from "./resolve-plan.ts";
 import { planResult, type PlanView } from "./view.ts";
 
@@ -52,37 +50,27 @@ export interface AnsweredPlan {
   /** Kept by a worker for single points and other quantities of the same plan. */
   readonly ranked: RankedPlan | null;
   readonly plan: ResolvedPlan | null;
-  readonly request: RankRequest | null;
 }
 
-/** The page's answer to a question in words; faults instead where a field cannot be read. */
-export function planJob(
-  question: PlanQuestion,
+/** The page's answer to a request that was read from a question. */
+export function viewJob(
+  request: RankRequest,
+  objectiveProposed: boolean,
   tables: ScatteringTables,
-  finder: MaterialFinder,
+  lookup: MaterialLookup,
   date: Date,
   options: JobOptions = {},
 ): AnsweredPlan {
-  const { request, faults, objectiveProposed } = readPlan(question, finder);
-  if (!request) return { view: { faults, result: null }, ranked: null, plan: null, request: null };
   try {
-    const plan = resolvePlan(request, finder.lookup);
+    const plan = resolvePlan(request, lookup);
     const grid = resolveGrid(request, plan.task, tables);
     const ranked = rankPlan(plan.task, grid, tables, options);
-    return {
-      view: { faults, result: planResult(ranked, plan, tables, { objectiveProposed, date }) },
-      ranked,
-      plan,
-      request,
-    };
+    const result = planResult(ranked, plan, tables, { objectiveProposed, date });
+    return { view: { faults: [], result }, ranked, plan };
   } catch (error) {
     if (!(error instanceof StatementError)) throw error;
-    const fault: PlanFault = {
-      field: fieldOfPath(error.path),
-      message: error.message,
-      position: null,
-      suggestions: [],
-    };
-    return { view: { faults: [fault], result: null }, ranked: null, plan: null, request };
+    const { path, message } = error;
+    const fault: PlanFault = { field: fieldOfPath(path), message, position: null, suggestions: [] };
+    return { view: { faults: [fault], result: null }, ranked: null, plan: null };
   }
 }

@@ -48,11 +48,11 @@ function namedIn(question: Question, handbook: MaterialFinder): KnownMaterial[] 
   ];
   const found = words.flatMap((word) => handbook.find(word.trim()) ?? []);
   const formulas = words.flatMap((word) => handbook.ofFormula(word.trim()));
-  return [...new Map([...found, ...formulas].map((material) => [material.id, slim(material)])).values()];
+  return [...new Map([...found, ...formulas].map((material) => [material.id, slimMaterial(material)])).values()];
 }
 
 /** Only what the island computes with: the page carries no more than it needs. */
-function slim({
+export function slimMaterial({
   id,
   name,
   alsoKnownAs,

@@ -4,7 +4,7 @@ import { type KeyboardEvent, useDeferredValue, useId, useState } from "react";
 import { Formula } from "#src/components/ui/Formula.tsx";
 import { formatGiven } from "#src/lib/format/numbers.ts";
 import type { KnownMaterial } from "#src/lib/lookup/finder.ts";
-import { searchMaterials } from "./searchMaterials.ts";
+import { searchMaterials } from "#src/lib/lookup/search.client.ts";
 
 interface Props {
   readonly label: string;

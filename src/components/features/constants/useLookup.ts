@@ -12,7 +12,7 @@ import { materialOfLine, QuestionError, statedMaterial } from "#src/lib/lookup/s
 import { type View, viewOf } from "#src/lib/lookup/view.ts";
 import type { TableInfo } from "#src/lib/tables/info.ts";
 import { type LoadedElement, loadElement, tablesOf } from "#src/lib/tables/load.client.ts";
-import { searchMaterials } from "./searchMaterials.ts";
+import { searchMaterials } from "#src/lib/lookup/search.client.ts";
 
 export interface LookupStart {
   readonly question: Question;

@@ -1,5 +1,5 @@
 /** Fuzzy search in the handbook over the API, best first. */
-import type { KnownMaterial } from "#src/lib/lookup/finder.ts";
+import type { KnownMaterial } from "./finder.ts";
 
 interface MaterialsAnswer {
   readonly items: readonly (KnownMaterial & { readonly tags: readonly string[] })[];
