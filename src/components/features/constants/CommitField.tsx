@@ -1,13 +1,12 @@
 /** A small field in running text: what is typed counts on Enter or when the field is left. Part of the page's form without scripts. */
 import { useId } from "react";
-import { Fault } from "#src/components/ui/Messages.tsx";
-import type { FieldFault } from "#src/lib/lookup/state-material.ts";
-import type { BlankField } from "./Blank.tsx";
+import { FaultWithFixes } from "#src/components/features/question/FaultWithFixes.tsx";
+import type { FieldFault, QuestionField } from "#src/lib/lookup/state-material.ts";
 
 export const FORM_ID = "question-form";
 
 interface Props {
-  readonly field: BlankField;
+  readonly field: QuestionField;
   readonly label: string;
   readonly value: string;
   readonly width?: string;
@@ -44,31 +43,5 @@ export function CommitField({ field, label, value, width = "9ch", fault, onCommi
       />
       {fault ? <FaultWithFixes fault={fault} id={faultId} onFix={onCommit} /> : null}
     </>
-  );
-}
-
-/** A fault with one button for each text that would be accepted. */
-export function FaultWithFixes({
-  fault,
-  id,
-  onFix,
-}: {
-  fault: FieldFault;
-  id?: string;
-  onFix: (text: string) => void;
-}) {
-  return (
-    <span className="fault-block" role="alert">
-      <Fault id={id}>{fault.message}</Fault>
-      {fault.suggestions.length > 0 ? (
-        <span className="chips">
-          {fault.suggestions.map(({ text, words }) => (
-            <button key={words} type="button" className="chip needs-script" onClick={() => onFix(text)}>
-              {words}
-            </button>
-          ))}
-        </span>
-      ) : null}
-    </span>
   );
 }

@@ -5,8 +5,8 @@ import { Mark } from "#src/components/ui/Mark.tsx";
 import { formatGiven, significantText } from "#src/lib/format/numbers.ts";
 import { methodHref } from "#src/lib/format/method-links.ts";
 import type { View } from "#src/lib/lookup/view.ts";
-import { FaultWithFixes } from "./CommitField.tsx";
-import { MaterialCombobox } from "./MaterialCombobox.tsx";
+import { FaultWithFixes } from "#src/components/features/question/FaultWithFixes.tsx";
+import { MaterialCombobox } from "#src/components/features/question/MaterialCombobox.tsx";
 import type { Lookup } from "./useLookup.ts";
 
 export function CompareSection({ lookup }: { lookup: Lookup }) {

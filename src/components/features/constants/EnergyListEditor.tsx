@@ -1,7 +1,7 @@
 /** The list of energies as text of several lines: numbers, a pasted column, or a range. */
 import { useState } from "react";
 import type { FieldFault } from "#src/lib/lookup/state-material.ts";
-import { FaultWithFixes } from "./CommitField.tsx";
+import { FaultWithFixes } from "#src/components/features/question/FaultWithFixes.tsx";
 
 export function EnergyListEditor({
   value,

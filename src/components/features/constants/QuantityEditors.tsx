@@ -1,6 +1,7 @@
 /** Editors of the density and energy blanks: text with a unit, read as it is typed. */
-import { useId, useState } from "react";
-import { Fault } from "#src/components/ui/Messages.tsx";
+import { useState } from "react";
+import { BlankPanel } from "#src/components/features/question/Blank.tsx";
+import { attempt, ReadField } from "#src/components/features/question/ReadField.tsx";
 import { formatGiven, significantText } from "#src/lib/format/numbers.ts";
 import {
   angstromFromM,
@@ -11,63 +12,12 @@ import {
 } from "#src/lib/physics/index.ts";
 import type { Question } from "#src/lib/lookup/question.ts";
 import { parseEnergies, parseQuantity, QuantityError } from "#src/lib/quantities/index.ts";
-import { BlankPanel } from "./Blank.tsx";
 import type { Lookup } from "./useLookup.ts";
 
 interface Props {
   readonly lookup: Lookup;
   readonly onTake: (fields: Partial<Question>) => void;
   readonly onClose: () => void;
-}
-
-type Reading = { ok: true; words: string } | { ok: false; words: string };
-
-function attempt(read: () => string): Reading {
-  try {
-    return { ok: true, words: read() };
-  } catch (error) {
-    if (error instanceof QuantityError) return { ok: false, words: error.message };
-    throw error;
-  }
-}
-
-function ReadField({
-  label,
-  value,
-  reading,
-  onChange,
-}: {
-  label: string;
-  value: string;
-  reading: Reading | null;
-  onChange: (text: string) => void;
-}) {
-  const id = useId();
-  return (
-    <div className="field">
-      <label htmlFor={id}>{label}</label>
-      <input
-        id={id}
-        className="input"
-        type="text"
-        value={value}
-        maxLength={64}
-        autoComplete="off"
-        spellCheck={false}
-        aria-invalid={reading?.ok === false ? "true" : undefined}
-        aria-describedby={`${id}-reading`}
-        onFocus={(event) => event.currentTarget.select()}
-        onChange={(event) => onChange(event.currentTarget.value)}
-      />
-      <div id={`${id}-reading`} aria-live="polite">
-        {reading === null ? null : reading.ok ? (
-          <p className="note">{reading.words}</p>
-        ) : (
-          <Fault>{reading.words}</Fault>
-        )}
-      </div>
-    </div>
-  );
 }
 
 export function DensityEditor({ lookup, onTake, onClose }: Props) {

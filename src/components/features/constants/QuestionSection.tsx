@@ -1,23 +1,23 @@
 /** The question as a sentence with blanks. With scripts each blank opens its editor; without, the same fields are one plain form. */
 import { type ReactNode, useState } from "react";
+import { Blank } from "#src/components/features/question/Blank.tsx";
+import { FaultWithFixes } from "#src/components/features/question/FaultWithFixes.tsx";
+import { RecipeEditor } from "#src/components/features/question/RecipeEditor.tsx";
 import { Formula } from "#src/components/ui/Formula.tsx";
 import { formatGiven } from "#src/lib/format/numbers.ts";
 import type { Question } from "#src/lib/lookup/question.ts";
-import type { FieldFault } from "#src/lib/lookup/state-material.ts";
+import type { FieldFault, QuestionField } from "#src/lib/lookup/state-material.ts";
 import type { View } from "#src/lib/lookup/view.ts";
-import { Blank, type BlankField } from "./Blank.tsx";
-import { FaultWithFixes } from "./CommitField.tsx";
 import { DensityEditor, EnergyEditor } from "./QuantityEditors.tsx";
 import { MaterialEditor } from "./MaterialEditor.tsx";
 import { PlainForm } from "./PlainForm.tsx";
-import { RecipeEditor } from "./RecipeEditor.tsx";
 import type { Lookup } from "./useLookup.ts";
 
-export const faultOf = (view: View, field: BlankField): FieldFault | undefined =>
+export const faultOf = (view: View, field: QuestionField): FieldFault | undefined =>
   view.faults.find((fault) => fault.field === field);
 
 /** The order in which Enter goes on. */
-const NEXT: Partial<Record<BlankField, BlankField>> = { material: "density", density: "energy" };
+const NEXT: Partial<Record<QuestionField, QuestionField>> = { material: "density", density: "energy" };
 
 export function QuestionSection({ lookup }: { lookup: Lookup }) {
   return (
@@ -35,9 +35,9 @@ export function QuestionSection({ lookup }: { lookup: Lookup }) {
 /** The sentence, the editor of the blank that is open, and what the material is made of. */
 export function QuestionSentence({ lookup, plainAction }: { lookup: Lookup; plainAction: string }) {
   const { question, view, change } = lookup;
-  const [open, setOpen] = useState<BlankField | null>(null);
-  const toggle = (field: BlankField) => () => setOpen((before) => (before === field ? null : field));
-  const take = (field: BlankField, fields: Partial<Question>, goOn = true): void => {
+  const [open, setOpen] = useState<QuestionField | null>(null);
+  const toggle = (field: QuestionField) => () => setOpen((before) => (before === field ? null : field));
+  const take = (field: QuestionField, fields: Partial<Question>, goOn = true): void => {
     change(fields);
     setOpen(goOn ? (NEXT[field] ?? null) : null);
   };
@@ -70,7 +70,17 @@ export function QuestionSentence({ lookup, plainAction }: { lookup: Lookup; plai
         {open === "material" ? (
           <MaterialEditor {...common} onTake={(fields, goOn) => take("material", fields, goOn)} />
         ) : null}
-        {open === "parts" ? <RecipeEditor {...common} onTake={(fields) => take("parts", fields, false)} /> : null}
+        {open === "parts" ? (
+          <RecipeEditor
+            field="parts"
+            recipe={question}
+            whole={view.main?.keptId ? view.main.label : (view.main?.formula ?? question.material)}
+            known={lookup.known}
+            learn={lookup.learn}
+            onTake={(fields) => take("parts", fields, false)}
+            onClose={common.onClose}
+          />
+        ) : null}
         {open === "density" ? <DensityEditor {...common} onTake={(fields) => take("density", fields)} /> : null}
         {open === "energy" ? <EnergyEditor {...common} onTake={(fields) => take("energy", fields)} /> : null}
         <p className="facts-line question-facts">

@@ -4,6 +4,7 @@
  */
 import { useQueries, type UseQueryResult } from "@tanstack/react-query";
 import { useEffect, useMemo, useRef, useState } from "react";
+import { useNamedMaterials } from "#src/components/features/question/useNamedMaterials.ts";
 import { answerQuestion } from "#src/lib/lookup/answer.ts";
 import { type KnownMaterial, materialFinder, type MaterialFinder } from "#src/lib/lookup/finder.ts";
 import { type Question, writeQuestion } from "#src/lib/lookup/question.ts";
@@ -12,7 +13,6 @@ import { materialOfLine, QuestionError, statedMaterial } from "#src/lib/lookup/s
 import { type View, viewOf } from "#src/lib/lookup/view.ts";
 import type { TableInfo } from "#src/lib/tables/info.ts";
 import { type LoadedElement, loadElement, tablesOf } from "#src/lib/tables/load.client.ts";
-import { searchMaterials } from "#src/lib/lookup/search.client.ts";
 
 export interface LookupStart {
   readonly question: Question;
@@ -78,30 +78,6 @@ function wordsOf(question: Question): string[] {
   return [...named, ...lines];
 }
 
-/** Asks the handbook once for each of the words that is not known here yet. */
-export function useNamedMaterials(given: readonly string[], known: readonly KnownMaterial[]) {
-  const key = given.join("\n");
-  const words = useMemo(() => {
-    const finder = materialFinder(known);
-    return [...new Set(key.split("\n").map((word) => word.trim()))].filter(
-      (word) => word.length >= 2 && word.length <= 64 && !finder.find(word),
-    );
-  }, [key, known]);
-  const answers = useQueries({
-    queries: words.map((word) => ({
-      queryKey: ["materials", word],
-      queryFn: ({ signal }: { signal: AbortSignal }) => searchMaterials(word, 8, signal),
-      staleTime: Infinity,
-    })),
-    combine: foundMaterials,
-  });
-  const near = useMemo(
-    () => new Map(words.map((word, index) => [word, answers.lists[index] ?? []])),
-    [words, answers.lists],
-  );
-  return { ...answers, near };
-}
-
 /** The elements of every material that can be read from the question. */
 function useElements(question: Question, finder: MaterialFinder, info: TableInfo) {
   const atomicNumbers = useMemo(() => {
@@ -131,15 +107,6 @@ function useElements(question: Question, finder: MaterialFinder, info: TableInfo
 
 // Kept outside the hooks: react-query gives the same object back while the results are the same, so that answers are not
 // computed again for nothing.
-function foundMaterials(results: UseQueryResult<readonly KnownMaterial[]>[]) {
-  return {
-    lists: results.map((result) => result.data ?? []),
-    found: results.flatMap((result) => result.data ?? []),
-    pending: results.some((result) => result.isPending),
-    trouble: results.some((result) => result.isError) ? "The handbook cannot be reached. Formulas still work." : null,
-  };
-}
-
 function loadedElements(results: UseQueryResult<LoadedElement>[]) {
   const loaded = results.flatMap((result) => (result.data ? [result.data] : []));
   return {

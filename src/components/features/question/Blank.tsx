@@ -1,21 +1,21 @@
 /** A blank of the sentence: a button that shows its value and opens an editor below the line. One is open at a time. */
 import { type ReactNode, useEffect, useId, useRef } from "react";
-import type { Question } from "#src/lib/lookup/question.ts";
-
-export type BlankField = keyof Question;
 
 interface BlankProps {
-  readonly field: BlankField;
+  /** Names the blank among those of its sentence, and its panel. */
+  readonly field: string;
   readonly label: string;
   readonly children: ReactNode;
   readonly open: boolean;
   readonly unset?: boolean;
+  /** Ids of the faults that speak of it; the blank is marked. */
+  readonly faultIds?: string | undefined;
   readonly onToggle: () => void;
 }
 
-export const panelId = (field: BlankField): string => `blank-${field}`;
+export const panelId = (field: string): string => `blank-${field}`;
 
-export function Blank({ field, label, children, open, unset = false, onToggle }: BlankProps) {
+export function Blank({ field, label, children, open, unset = false, faultIds, onToggle }: BlankProps) {
   return (
     <button
       type="button"
@@ -23,6 +23,8 @@ export function Blank({ field, label, children, open, unset = false, onToggle }:
       data-blank={field}
       aria-expanded={open}
       aria-controls={panelId(field)}
+      aria-invalid={faultIds === undefined ? undefined : "true"}
+      aria-describedby={faultIds}
       onClick={onToggle}
     >
       <span className="sr-only">{`Change ${label}: `}</span>
@@ -32,16 +34,23 @@ export function Blank({ field, label, children, open, unset = false, onToggle }:
 }
 
 interface PanelProps {
-  readonly field: BlankField;
+  /** The blank that it hangs from. */
+  readonly field: string;
   readonly title: string;
   readonly takeText: string;
   readonly help?: ReactNode;
-  readonly wide?: boolean;
+  readonly width?: keyof typeof WIDTHS;
   readonly canTake?: boolean;
   readonly onTake: () => void;
   readonly onClose: () => void;
   readonly children: ReactNode;
 }
+
+const WIDTHS = {
+  narrow: "panel panel-hang panel-sheet",
+  medium: "panel panel-medium panel-hang panel-sheet",
+  wide: "panel panel-wide panel-hang panel-sheet",
+} as const;
 
 /** The editor of an open blank. Enter takes, Escape and Close keep the old value. On a phone it is a sheet with the focus kept inside. */
 export function BlankPanel({
@@ -49,7 +58,7 @@ export function BlankPanel({
   title,
   takeText,
   help,
-  wide = false,
+  width = "narrow",
   canTake = true,
   onTake,
   onClose,
@@ -64,7 +73,7 @@ export function BlankPanel({
     const middle =
       blank.getBoundingClientRect().left + Math.min(blank.offsetWidth / 2, 60) - element.getBoundingClientRect().left;
     element.style.setProperty("--at", `${Math.max(20, Math.min(middle, element.clientWidth - 20))}px`);
-    element.querySelector<HTMLElement>("input, textarea, select")?.focus();
+    firstStop(element)?.focus();
     return () => blank.focus({ preventScroll: true });
   }, [field]);
 
@@ -74,7 +83,7 @@ export function BlankPanel({
       <form
         ref={panel}
         id={panelId(field)}
-        className={wide ? "panel panel-medium panel-hang panel-sheet" : "panel panel-hang panel-sheet"}
+        className={WIDTHS[width]}
         role="dialog"
         aria-labelledby={headingId}
         onSubmit={(event) => {
@@ -102,6 +111,15 @@ export function BlankPanel({
         </div>
       </form>
     </>
+  );
+}
+
+/** The first field; of a group of radio buttons the one that is chosen. */
+function firstStop(panel: HTMLElement): HTMLElement | null {
+  const first = panel.querySelector<HTMLElement>("input, textarea, select");
+  if (!(first instanceof HTMLInputElement) || first.type !== "radio") return first;
+  return (
+    [...panel.querySelectorAll<HTMLInputElement>("input:checked")].find(({ name }) => name === first.name) ?? first
   );
 }
 

@@ -3,17 +3,26 @@ import { useDeferredValue, useState } from "react";
 import { Segments } from "#src/components/ui/Segments.tsx";
 import { Fault } from "#src/components/ui/Messages.tsx";
 import { formatGiven } from "#src/lib/format/numbers.ts";
-import { MIXTURE_BASES, type MixtureBasisChoice, type Question } from "#src/lib/lookup/question.ts";
+import { DEFAULT_QUESTION, MIXTURE_BASES, type MixtureBasisChoice, type Question } from "#src/lib/lookup/question.ts";
 import { readRecipe, type RecipeLine, writeRecipe } from "#src/lib/lookup/recipe.ts";
 import { QuestionError, statedMaterial } from "#src/lib/lookup/state-material.ts";
 import { type KnownMaterial, materialFinder } from "#src/lib/lookup/finder.ts";
 import { BlankPanel } from "./Blank.tsx";
 import { RecipeRow } from "./RecipeRow.tsx";
-import { type Lookup, useNamedMaterials } from "./useLookup.ts";
+import { useNamedMaterials } from "./useNamedMaterials.ts";
+
+/** What a recipe is made of, and how its shares are counted. */
+export type Recipe = Pick<Question, "parts" | "by" | "density">;
 
 interface Props {
-  readonly lookup: Lookup;
-  readonly onTake: (fields: Partial<Question>) => void;
+  /** The blank that it hangs from. */
+  readonly field: string;
+  readonly recipe: Recipe;
+  /** The material that a new recipe begins with. */
+  readonly whole: string;
+  readonly known: readonly KnownMaterial[];
+  readonly learn: (materials: readonly KnownMaterial[]) => void;
+  readonly onTake: (fields: Recipe) => void;
   readonly onClose: () => void;
 }
 
@@ -26,29 +35,22 @@ const BASIS_OPTIONS: readonly { value: MixtureBasisChoice; label: string }[] = [
 
 const BLANK_LINE: RecipeLine = { depth: 0, share: "", material: "", density: "", basis: "" };
 
-function startLines(question: Question, label: string | undefined): RecipeLine[] {
-  const lines = readRecipe(question.parts);
-  if (lines.length > 0) return lines;
-  return [{ ...BLANK_LINE, share: "100", material: label ?? question.material }, BLANK_LINE];
+function startLines(recipe: Recipe, whole: string): RecipeLine[] {
+  const lines = readRecipe(recipe.parts);
+  return lines.length > 0 ? lines : [{ ...BLANK_LINE, share: "100", material: whole }, BLANK_LINE];
 }
 
-export function RecipeEditor({ lookup, onTake, onClose }: Props) {
-  const { question } = lookup;
-  const [lines, setLines] = useState(() =>
-    startLines(question, lookup.view.main?.keptId ? lookup.view.main.label : (lookup.view.main?.formula ?? undefined)),
-  );
-  const [by, setBy] = useState<MixtureBasisChoice>(question.by);
-  const [density, setDensity] = useState(question.parts.trim() === "" ? "" : question.density);
+export function RecipeEditor({ field, recipe, whole, known, learn, onTake, onClose }: Props) {
+  const [lines, setLines] = useState(() => startLines(recipe, whole));
+  const [by, setBy] = useState<MixtureBasisChoice>(recipe.by);
+  const [density, setDensity] = useState(recipe.parts.trim() === "" ? "" : recipe.density);
   const [asText, setAsText] = useState(false);
   const text = writeRecipe(lines.filter((line) => line.material !== "" || line.share !== ""));
   const named = useNamedMaterials(
     useDeferredValue(lines).map((line) => line.material),
-    lookup.known,
+    known,
   );
-  const fault = readingFault({ ...question, parts: text, by, density: density.trim() }, [
-    ...lookup.known,
-    ...named.found,
-  ]);
+  const fault = readingFault({ parts: text, by, density: density.trim() }, [...known, ...named.found]);
 
   const update = (index: number, fields: Partial<RecipeLine>): void =>
     setLines((before) => before.map((line, at) => (at === index ? { ...line, ...fields } : line)));
@@ -73,9 +75,9 @@ export function RecipeEditor({ lookup, onTake, onClose }: Props) {
 
   return (
     <BlankPanel
-      field="parts"
+      field={field}
       title="Mixture"
-      wide
+      width="medium"
       takeText="Take this mixture"
       canTake={fault === null}
       help="Shares that add up to less than 100 % are scaled, and the answer says so."
@@ -121,7 +123,7 @@ export function RecipeEditor({ lookup, onTake, onClose }: Props) {
                   number={index + 1}
                   onChange={(fields) => update(index, fields)}
                   onPick={(material) => {
-                    lookup.learn([material]);
+                    learn([material]);
                     update(index, { material: material.name });
                   }}
                   onRemove={() => remove(index)}
@@ -190,10 +192,10 @@ function SumLine({ lines, onGive }: { lines: readonly RecipeLine[]; onGive: (ind
 }
 
 /** What keeps the mixture from being taken; null when it can be. */
-function readingFault(question: Question, known: readonly KnownMaterial[]): string | null {
-  if (question.parts === "") return "The recipe has no parts.";
+function readingFault(recipe: Recipe, known: readonly KnownMaterial[]): string | null {
+  if (recipe.parts === "") return "The recipe has no parts.";
   try {
-    statedMaterial(question, materialFinder(known));
+    statedMaterial({ ...DEFAULT_QUESTION, ...recipe }, materialFinder(known));
     return null;
   } catch (error) {
     if (error instanceof QuestionError) return error.message;
