@@ -13,6 +13,7 @@ import { committedTables } from "#data/build/committed-tables.ts";
 import { compositionOfFormula, constantsOverEnergy, parseFormula, withDensity } from "#src/lib/physics/index.ts";
 import { searchMaterials } from "#src/lib/services/materials.ts";
 import { folder, freePort } from "#tests/support/server.ts";
+import { planes } from "./planes.ts";
 
 const say = (what: string, figure: string, aim = ""): void =>
   console.log(`${what.padEnd(66)} ${figure.padStart(16)}${aim === "" ? "" : `   aim ${aim}`}`);
@@ -138,7 +139,7 @@ async function served(): Promise<void> {
 
   const worst = await worstRequest(second.url);
   say("Worst legal request: 2,000 energies, 32 parts of 98 elements", ms(worst));
-  for (const path of ["/", "/constants", "/materials", "/method"]) await scriptBytes(second.url, path);
+  for (const path of ["/", "/constants", "/plan", "/materials", "/method"]) await scriptBytes(second.url, path);
   await second.stop();
   rmSync(fresh, { recursive: true, force: true });
 }
@@ -196,4 +197,5 @@ async function scriptBytes(url: string, path: string): Promise<void> {
 
 console.log(`Rimelight, Node ${process.version}, ${availableParallelism()} cores\n`);
 core();
+await planes(committedTables(), say);
 await served();

@@ -32,6 +32,7 @@ export * from "./shapes.ts";
 export { type Band, type BandKind, frequencyBand } from "./band.ts";
 export { absorptionSums, bandSums, type BandSums, type BeamContrast, type BeamTerm } from "./transfer.ts";
 export * from "./detector.ts";
+export * from "./retrieval.ts";
 
 // Plans: one point, the plane, the ranking
 export * from "./plan/task.ts";

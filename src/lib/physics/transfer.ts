@@ -6,6 +6,7 @@
 import type { Band, Foot, Piece } from "./band.ts";
 import { acrossM } from "./shapes.ts";
 import { filonFactors } from "./numerics/filon.ts";
+import { retrievalFilter } from "./retrieval.ts";
 
 /** One photon energy of a beam: its share of the detected photons, and the contrast it carries. */
 export interface BeamTerm {
@@ -38,6 +39,8 @@ export interface BandSums {
 const DIRECT_STEP = 0.1;
 /** Below a cut: χ and γχ at most, and at most a quarter of a period of the shape. */
 const FOOT_PHASE = 0.5;
+/** Up to this χ the parts of an energy band act as one. */
+const TOGETHER = 0.05;
 const FOOT_FILTER = 1;
 const MOST_PIECES = 60;
 /** Fringes fade as exp(−χ²s²/2), s the relative deviation of the energies: full steps of s hold up to here, half steps … */
@@ -65,25 +68,36 @@ export function bandSums(
   out.second = 0;
   const nyquist = band.geometry.nyquistPerM;
   const terms = phaseRate * nyquist * nyquist * beam.relativeSigma < COARSE_UP_TO ? beam.terms : beam.fineTerms;
+  // Where χ is small the parts act as one: Σ a cos χ_k + p sin χ_k is a cos χ + p' sin χ with p' = Σ p λ_k/λ, to χ²s².
+  let absorption = 0;
+  let phase = 0;
+  for (let t = 0; t < terms.length; t++) {
+    const term = terms[t]!;
+    absorption += term.absorption;
+    phase += term.phase * (term.wavelengthM / beam.wavelengthM);
+  }
   let pieces = band.pieces;
   if (pieces === null) {
     const longest = band.shape.kind === "layer" ? Math.max(band.shape.sizeM, band.shape.widthM) : acrossM(band.shape);
     const footPerM = Math.min(
       1 / (4 * longest),
-      phaseRate > 0 ? Math.sqrt(FOOT_PHASE / phaseRate) : Infinity,
+      phaseRate > 0 ? Math.sqrt((terms.length === 1 ? FOOT_PHASE : TOGETHER) / phaseRate) : Infinity,
       filterRate > 0 ? Math.sqrt(FOOT_FILTER / filterRate) : Infinity,
     );
     pieces = Math.min(MOST_PIECES, Math.max(0, Math.ceil(Math.log2(nyquist / footPerM))));
     if (pieces === 0) pieces = 1;
-    addFoot(band.foot(pieces - 1), beam.wavelengthM, terms, phaseRate, filterRate, out);
+    addFoot(band.foot(pieces - 1), absorption, phase, phaseRate, filterRate, out);
   }
-  const single = terms.length === 1 ? (terms[0] as BeamTerm) : null;
+  const single = terms.length === 1;
   for (let index = 0; index < pieces; index++) {
     const piece = band.piece(index);
-    if (single === null) addEnsemble(piece, beam, terms, phaseRate, filterRate, out);
-    else if (phaseRate * piece.stepPerM2 <= DIRECT_STEP)
-      addDirect(piece, single.absorption, single.phase, phaseRate, filterRate, out);
-    else addFilon(piece, single.absorption, single.phase, phaseRate, filterRate, out);
+    const topPhase = phaseRate * (piece.startPerM2 + piece.intervals * piece.stepPerM2);
+    if (!single && topPhase > TOGETHER) {
+      if (phaseRate * piece.startPerM2 * beam.relativeSigma <= FADED)
+        addEnsemble(piece, beam, terms, phaseRate, filterRate, out);
+    } else if (phaseRate * piece.stepPerM2 <= DIRECT_STEP)
+      addDirect(piece, absorption, phase, phaseRate, filterRate, out);
+    else addFilon(piece, absorption, phase, phaseRate, filterRate, out);
   }
   return out;
 }
@@ -97,24 +111,22 @@ export function absorptionSums(band: Band): BandSums {
 }
 
 function addFoot(
-  foot: Foot,
-  wavelengthM: number,
-  terms: readonly BeamTerm[],
+  { squaresPerM2, first, second }: Foot,
+  absorption: number,
+  phase: number,
   phaseRate: number,
   filterRate: number,
   out: BandSums,
 ): void {
-  const { squaresPerM2, first, second } = foot;
-  const perMetre = phaseRate / wavelengthM;
   for (let k = 0; k < squaresPerM2.length; k++) {
     const v = squaresPerM2[k]!;
-    let amplitude = 0;
-    for (let t = 0; t < terms.length; t++) {
-      const term = terms[t]!;
-      const chi = perMetre * term.wavelengthM * v;
-      amplitude += term.absorption * Math.cos(chi) + term.phase * Math.sin(chi);
-    }
-    const filter = 1 / (1 + filterRate * v);
+    const chi = phaseRate * v;
+    const square = chi * chi;
+    // Series of cosine and sine: χ is at most FOOT_PHASE, the first term left out 3e-9.
+    const amplitude =
+      absorption * (1 - (square / 2) * (1 - (square / 12) * (1 - square / 30))) +
+      phase * chi * (1 - (square / 6) * (1 - (square / 20) * (1 - square / 42)));
+    const filter = retrievalFilter(filterRate, v);
     const filtered = filter * filter * amplitude * amplitude;
     out.first += first[k]! * filtered;
     out.second += second[k]! * filtered * filter * filter;
@@ -131,15 +143,17 @@ function addDirect(
   out: BandSums,
 ): void {
   const { startPerM2, stepPerM2, intervals, first, second } = piece;
-  const start = phaseRate * startPerM2;
   const step = phaseRate * stepPerM2;
-  const amplitude = (k: number): number => absorption * Math.cos(start + k * step) + phase * Math.sin(start + k * step);
-  const twice = 2 * Math.cos(2 * step);
-  // Even nodes 0, 2, … and odd nodes 1, 3, … as two chains that do not wait for each other.
-  let even = amplitude(0);
-  let evenBefore = amplitude(-2);
-  let odd = amplitude(1);
-  let oddBefore = amplitude(-1);
+  const [c, s] = [Math.cos(phaseRate * startPerM2), Math.sin(phaseRate * startPerM2)];
+  const [turnC, turnS] = [Math.cos(step), Math.sin(step)];
+  const cosine2 = 1 - 2 * turnS * turnS;
+  const twice = 2 * cosine2;
+  // Even nodes 0, 2, … and odd nodes 1, 3, … as two chains that do not wait for each other: g(k) = g cos kΔχ + q sin kΔχ.
+  const quarter = phase * c - absorption * s;
+  let even = absorption * c + phase * s;
+  let evenBefore = even * cosine2 - quarter * 2 * turnS * turnC;
+  let odd = even * turnC + quarter * turnS;
+  let oddBefore = even * turnC - quarter * turnS;
   let evens = 0;
   let odds = 0;
   let evensFiltered = 0;
@@ -211,13 +225,20 @@ function addFilon(
   const sine = absorption * phase;
   const start = 2 * phaseRate * startPerM2;
   const theta = 2 * phaseRate * stepPerM2;
-  const wave = (k: number): number => cosine * Math.cos(start + k * theta) + sine * Math.sin(start + k * theta);
-  const quarter = (k: number): number => cosine * Math.sin(start + k * theta) - sine * Math.cos(start + k * theta);
-  const twice = 2 * Math.cos(2 * theta);
-  let even = wave(0);
-  let evenBefore = wave(-2);
-  let odd = wave(1);
-  let oddBefore = wave(-1);
+  const [c, s] = [Math.cos(start), Math.sin(start)];
+  const [turnC, turnS] = [Math.cos(theta), Math.sin(theta)];
+  const cosine2 = 1 - 2 * turnS * turnS;
+  const twice = 2 * cosine2;
+  // w(k) = w cos kθ + q sin kθ; the end terms are those of −q.
+  const quarter = sine * c - cosine * s;
+  let even = cosine * c + sine * s;
+  let evenBefore = even * cosine2 - quarter * 2 * turnS * turnC;
+  let odd = even * turnC + quarter * turnS;
+  let oddBefore = even * turnC - quarter * turnS;
+  const quarterEnd = (): number => {
+    const end = start + intervals * theta;
+    return cosine * Math.sin(end) - sine * Math.cos(end);
+  };
   let evens = 0;
   let odds = 0;
   filonFactors(theta, factors);
@@ -235,7 +256,7 @@ function addFilon(
       odd = nextOdd;
     }
     evens += 0.5 * first[intervals]! * even - half;
-    const ends = first[intervals]! * quarter(intervals) - first[0]! * quarter(0);
+    const ends = first[intervals]! * quarterEnd() + first[0]! * quarter;
     out.first += mean * piece.firstSum + stepPerM2 * (alpha * ends + beta * evens + gamma * odds);
     out.second = out.first;
     return;
@@ -286,7 +307,7 @@ function addFilon(
   evensFiltered += 0.5 * filtered * even;
   plain += amount;
   plainFiltered += filtered;
-  const [last, begin] = [quarter(intervals), quarter(0)];
+  const [last, begin] = [quarterEnd(), -quarter];
   out.first +=
     (stepPerM2 / 3) * mean * plain +
     stepPerM2 * (alpha * (amount * last - firstEnd.amount * begin) + beta * evens + gamma * odds);

@@ -25,6 +25,7 @@ import { checkLines, type CheckLine } from "./check-lines.ts";
 import type { PlanFault } from "./faults.ts";
 import type { Objective, Use } from "./question.ts";
 import type { ResolvedPlan } from "./resolve-plan.ts";
+import { type Miss, missOf } from "./miss.ts";
 import { answerSentences, type AnswerSentences } from "./verdict-words.ts";
 
 export interface PickView {
@@ -103,6 +104,8 @@ export interface PlanResult {
   readonly fringe: ProfileView | null;
   readonly shadow: ProfileView | null;
   readonly working: Working | null;
+  /** Where no point is allowed. */
+  readonly miss: Miss | null;
   readonly beam: BeamView;
   readonly featureDose: boolean;
   readonly flux: boolean;
@@ -152,6 +155,7 @@ export function planResult(
     shadow: shadowOf ? profileView(shadowOf, ranked, false) : null,
     working:
       first && absorptionBest && task.use !== "absorption" ? workingOf(task, first, absorptionBest.figures) : null,
+    miss: missOf(ranked),
     beam: beamView(plan),
     featureDose: task.sample.host.material.densityKgPerM3 < 10,
     flux: task.setup.fluxPerSM2 !== null,

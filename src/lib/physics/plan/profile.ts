@@ -7,6 +7,9 @@ import { besselJ0 } from "../numerics/bessel.ts";
 import { acrossM, type Shape, transform } from "../shapes.ts";
 import type { Beam } from "./beam.ts";
 
+/** What a profile needs of a beam. */
+export type ProfileBeam = Pick<Beam, "wavelengthM" | "fineTerms" | "absorptionPerM">;
+
 /** Nodes for each period of whatever is quickest: shape, position or fringe. */
 const NODES_PER_PERIOD = 12;
 const LEAST_NODES = 240;
@@ -21,7 +24,7 @@ const STRAIGHT_EDGE = 24;
 export function contrastProfile(
   given: Shape,
   geometry: Geometry,
-  beam: Beam,
+  beam: ProfileBeam,
   positionsM: readonly number[],
   { phase }: { phase: boolean },
 ): number[] {
@@ -65,7 +68,7 @@ export function contrastProfile(
 }
 
 /** Δμ cos χ + (4π/λ)Δδ sin χ of the detected photons. */
-function passed(beam: Beam, effectiveDistanceM: number, frequencyPerM: number, phase: boolean): number {
+function passed(beam: ProfileBeam, effectiveDistanceM: number, frequencyPerM: number, phase: boolean): number {
   if (!phase) return beam.absorptionPerM;
   let sum = 0;
   for (const term of beam.fineTerms) {
@@ -76,7 +79,7 @@ function passed(beam: Beam, effectiveDistanceM: number, frequencyPerM: number, p
 }
 
 /** Largest |C| of the image: in the middle and around the edge, where fringes stand. */
-export function largestContrast(shape: Shape, geometry: Geometry, beam: Beam): number {
+export function largestContrast(shape: Shape, geometry: Geometry, beam: ProfileBeam): number {
   const edgeM = acrossM(shape) / 2;
   const fringeM = Math.max(
     geometry.sigmaM,
