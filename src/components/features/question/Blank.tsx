@@ -114,9 +114,10 @@ export function BlankPanel({
   );
 }
 
-/** The first field; of a group of radio buttons the one that is chosen. */
+/** The field marked as first, or the first one; of a group of radio buttons the one that is chosen. */
 function firstStop(panel: HTMLElement): HTMLElement | null {
-  const first = panel.querySelector<HTMLElement>("input, textarea, select");
+  const first =
+    panel.querySelector<HTMLElement>("[data-first]") ?? panel.querySelector<HTMLElement>("input, textarea, select");
   if (!(first instanceof HTMLInputElement) || first.type !== "radio") return first;
   return (
     [...panel.querySelectorAll<HTMLInputElement>("input:checked")].find(({ name }) => name === first.name) ?? first

@@ -1,5 +1,5 @@
 /** A field whose text is read as it is typed: the value as understood, or what keeps it from being read. */
-import { useId } from "react";
+import { type Ref, useId } from "react";
 import { Fault } from "#src/components/ui/Messages.tsx";
 import { QuantityError } from "#src/lib/quantities/index.ts";
 
@@ -20,11 +20,13 @@ export function attempt(read: () => string): Reading {
 }
 
 export function ReadField({
+  ref,
   label,
   value,
   reading,
   onChange,
 }: {
+  ref?: Ref<HTMLInputElement>;
   label: string;
   value: string;
   reading: Reading | null;
@@ -35,6 +37,7 @@ export function ReadField({
     <div className="field">
       <label htmlFor={id}>{label}</label>
       <input
+        ref={ref}
         id={id}
         className="input"
         type="text"

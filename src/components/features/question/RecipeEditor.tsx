@@ -23,6 +23,8 @@ interface Props {
   readonly known: readonly KnownMaterial[];
   readonly learn: (materials: readonly KnownMaterial[]) => void;
   readonly onTake: (fields: Recipe) => void;
+  /** Where the page offers to take one material instead inside the panel. */
+  readonly onOneMaterial?: () => void;
   readonly onClose: () => void;
 }
 
@@ -40,7 +42,7 @@ function startLines(recipe: Recipe, whole: string): RecipeLine[] {
   return lines.length > 0 ? lines : [{ ...BLANK_LINE, share: "100", material: whole }, BLANK_LINE];
 }
 
-export function RecipeEditor({ field, recipe, whole, known, learn, onTake, onClose }: Props) {
+export function RecipeEditor({ field, recipe, whole, known, learn, onTake, onOneMaterial, onClose }: Props) {
   const [lines, setLines] = useState(() => startLines(recipe, whole));
   const [by, setBy] = useState<MixtureBasisChoice>(recipe.by);
   const [density, setDensity] = useState(recipe.parts.trim() === "" ? "" : recipe.density);
@@ -146,6 +148,11 @@ export function RecipeEditor({ field, recipe, whole, known, learn, onTake, onClo
           <button type="button" className="btn btn-small" onClick={() => setAsText((before) => !before)}>
             {asText ? "Show as rows" : "Write as text"}
           </button>
+          {onOneMaterial ? (
+            <button type="button" className="btn btn-small" onClick={onOneMaterial}>
+              One material instead
+            </button>
+          ) : null}
           {by === "concentration" || asText ? null : (
             <SumLine lines={lines} onGive={(index, share) => update(index, { share })} />
           )}

@@ -1,0 +1,89 @@
+/** One layer, or the host, as a table row. */
+import type { KeyboardEvent, ReactNode } from "react";
+import { MaterialCombobox } from "#src/components/features/question/MaterialCombobox.tsx";
+import type { KnownMaterial } from "#src/lib/lookup/finder.ts";
+import type { LayerFields, LayerRow } from "./layer-rows.ts";
+
+interface Props {
+  readonly row: LayerRow;
+  readonly index: number;
+  readonly isLast: boolean;
+  readonly fault: string | null;
+  readonly onChange: (fields: LayerFields) => void;
+  readonly onPick: (material: KnownMaterial) => void;
+  readonly onMove: (step: -1 | 1) => void;
+  readonly onRemove: () => void;
+}
+
+export function LayerRowFields({ row, index, isLast, fault, onChange, onPick, onMove, onRemove }: Props) {
+  const named = row.material || `layer ${index + 1}`;
+  const faultId = fault === null ? undefined : `layer-${row.id}-fault`;
+  const onKeyDown = (event: KeyboardEvent): void => {
+    if (!event.altKey || (event.key !== "ArrowUp" && event.key !== "ArrowDown")) return;
+    // Before the material field takes the key for its list.
+    event.preventDefault();
+    event.stopPropagation();
+    onMove(event.key === "ArrowUp" ? -1 : 1);
+  };
+  const input = (field: "density" | "thickness", label: string, placeholder?: string): ReactNode => (
+    <input
+      className="input-inline figures"
+      style={{ width: "8ch" }}
+      type="text"
+      aria-label={label}
+      aria-describedby={faultId}
+      value={row[field]}
+      maxLength={32}
+      placeholder={placeholder}
+      autoComplete="off"
+      onFocus={(event) => event.currentTarget.select()}
+      onChange={(event) => onChange({ [field]: event.currentTarget.value })}
+    />
+  );
+  return (
+    <tr onKeyDownCapture={onKeyDown}>
+      <td className="layer-order">{index + 1}</td>
+      <td className="layer-material">
+        <MaterialCombobox
+          floating
+          inputClass="input-inline"
+          label={`Material of layer ${index + 1}`}
+          value={row.material}
+          describedBy={faultId}
+          onChange={(material) => onChange({ material })}
+          onPick={onPick}
+        />
+        {fault === null ? null : (
+          <p className="note" id={faultId}>
+            {fault}
+          </p>
+        )}
+      </td>
+      <td data-label="Thickness">{input("thickness", `Thickness of ${named}`)}</td>
+      <td data-label="Density, g/cm³">{input("density", `Density of ${named}, empty for the handbook’s`)}</td>
+      <td className="recipe-tools">
+        <button
+          type="button"
+          className="btn btn-small"
+          aria-label={`Move ${named} towards the source`}
+          aria-disabled={index === 0}
+          onClick={() => onMove(-1)}
+        >
+          <span aria-hidden="true">↑</span>
+        </button>
+        <button
+          type="button"
+          className="btn btn-small"
+          aria-label={`Move ${named} towards the detector`}
+          aria-disabled={isLast}
+          onClick={() => onMove(1)}
+        >
+          <span aria-hidden="true">↓</span>
+        </button>
+        <button type="button" className="btn btn-small" aria-label={`Take out ${named}`} onClick={onRemove}>
+          Take out
+        </button>
+      </td>
+    </tr>
+  );
+}
