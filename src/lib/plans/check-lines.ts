@@ -5,34 +5,40 @@ import { warningText } from "./warning-words.ts";
 
 export interface CheckLine {
   readonly state: "holds" | "check" | "fails";
-  readonly code: string;
+  readonly about: string;
   readonly text: string;
 }
 
 /** Warnings that forbid a pick of the use fail; the others ask to be checked. */
 const FORBIDDING = new Set(["insideSample", "undersampled", "contrastReversal", "nearFieldLeft", "nearEdge"]);
 
-export function checkLines(pick: PlanPick, task: PlanTask, names: { feature: string; host: string }): CheckLine[] {
+/** @param bestObjective of the shortlist: a pick far from it is not what the other tables are asked about */
+export function checkLines(
+  pick: PlanPick,
+  task: PlanTask,
+  names: { feature: string; host: string },
+  bestObjective: number | null,
+): CheckLine[] {
   const lines = pick.figures.checks.map((check): CheckLine => {
-    if (check.holds) return { state: "holds", code: check.code, text: holdsText(check, task) };
+    if (check.holds) return { state: "holds", about: check.code, text: holdsText(check, task) };
     const forbids = FORBIDDING.has(check.code) && pick.figures.technique === "phase";
-    return { state: forbids ? "fails" : "check", code: check.code, text: warningText(check, names) };
+    return { state: forbids ? "fails" : "check", about: check.code, text: warningText(check, names) };
   });
   const tables: CheckLine[] =
-    pick.agreesInAllTables === null
+    pick.agreesInAllTables === null || (!pick.agreesInAllTables && isFar(pick, bestObjective))
       ? []
       : pick.agreesInAllTables
         ? [
             {
               state: "holds",
-              code: "tables",
+              about: "tables",
               text: "Every table that covers this energy finds the same technique ahead, and this pick within 20 % of its best.",
             },
           ]
         : [
             {
               state: "check",
-              code: "tables",
+              about: "tables",
               text: "Not every table finds this pick within 20 % of its best with the same technique ahead. Compare the tables at this energy.",
             },
           ];
@@ -43,7 +49,7 @@ export function checkLines(pick: PlanPick, task: PlanTask, names: { feature: str
       : [
           {
             state: sensitivity > 0.5 ? "check" : "holds",
-            code: "density",
+            about: "density",
             text: `One stated uncertainty of the densities changes the dose needed by ${percentText(sensitivity)}.`,
           },
         ];
@@ -51,6 +57,10 @@ export function checkLines(pick: PlanPick, task: PlanTask, names: { feature: str
   const order = { fails: 0, check: 1, holds: 2 };
   return all.sort((a, b) => order[a.state] - order[b.state]);
 }
+
+/** Needs more than 20 % over the best of its own table, and so of every other. */
+const isFar = ({ figures: { objective } }: PlanPick, best: number | null): boolean =>
+  objective !== null && best !== null && objective > 1.2 * best;
 
 function holdsText({ code, value, limit }: Check, task: PlanTask): string {
   switch (code) {

@@ -57,6 +57,8 @@ export function headline(ranked: RankedPlan): string {
     return best ? `Use absorption at ${placeText(best, contact)}.` : noneHeadline(task);
   }
   if (choice === "either") {
+    if (Math.abs((ranked.objectiveAdvantage ?? 1) - 1) < 0.005)
+      return `Either works: phase and absorption need the same ${OBJECTIVE_WORDS[task.objective]}.`;
     return `Either works: phase needs ${ratioText(1 / (ranked.objectiveAdvantage ?? 1))} × the ${OBJECTIVE_WORDS[task.objective]} of absorption.`;
   }
   return `Use phase contrast at ${placeText(first, contact)}.`;
@@ -114,7 +116,10 @@ function absorptionSentence(ranked: RankedPlan, best: PlanPick, contact: number 
   const dose = spokenDoseGy(task, best);
   const who = choice === "absorption" ? "Absorption" : `Absorption at its best, ${placeText(best, contact)},`;
   const amount = dose === null ? "an unknown dose" : doseText(dose);
-  const ratio = doseAdvantage === null ? "" : `, ${ratioText(doseAdvantage)} × the dose of phase`;
+  const ratio =
+    doseAdvantage === null || Math.abs(doseAdvantage - 1) < 0.005
+      ? ""
+      : `, ${ratioText(doseAdvantage)} × the dose of phase`;
   const allowed = best.figures.forbiddenBy === null ? "" : ", beyond a limit";
   return `${who} needs ${amount}${ratio}${allowed}.`;
 }

@@ -174,7 +174,12 @@ export function pickView(pick: PlanPick, id: string, ranked: RankedPlan, plan: R
     objective: figures.objective === null ? null : figures.objective * (task.objective === "fluence" ? 1e-12 : 1),
     doseGy: task.sample.host.material.densityKgPerM3 < 10 ? figures.featureDoseGy : figures.entranceDoseGy,
     inContact: contact !== null && geometry.distanceM <= contact * (1 + 1e-9),
-    checks: checkLines(pick, task, { feature: plan.feature.label, host: plan.host.label }),
+    checks: checkLines(
+      pick,
+      task,
+      { feature: plan.feature.label, host: plan.host.label },
+      figures.technique === ranked.candidates[0]?.figures.technique ? ranked.candidates[0].figures.objective : null,
+    ),
     sourceBlurUm: geometry.sourceSigmaM * FWHM_PER_SIGMA * 1e6,
     detectorBlurUm: geometry.detectorSigmaM * FWHM_PER_SIGMA * 1e6,
     pixelUm: geometry.pixelM * 1e6,

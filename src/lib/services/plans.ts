@@ -53,8 +53,20 @@ export interface PlanPage {
   readonly tables: TableInfo;
 }
 
-/** The plan page: the address's question and its answer, or what stands in the way. */
-export async function planPage(query: URLSearchParams): Promise<PlanPage> {
+let unasked: Promise<PlanPage> | null = null;
+
+/** The plan page: the address's question and its answer, or what stands in the way. What nobody asked is answered once. */
+export function planPage(query: URLSearchParams): Promise<PlanPage> {
+  if (query.size > 0) return answeredPage(query);
+  unasked ??= answeredPage(query).then((page) => {
+    if (page.trouble !== null) unasked = null;
+    return page;
+  });
+  unasked.catch(() => (unasked = null));
+  return unasked;
+}
+
+async function answeredPage(query: URLSearchParams): Promise<PlanPage> {
   const question = readPlanQuestion(query);
   const tables = await getTables();
   const finder = handbookFinder();
