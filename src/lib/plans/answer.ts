@@ -6,6 +6,8 @@ import {
   type RankedPlan,
   type ScatteringTables,
 } from "#src/lib/physics/index.ts";
+import { formulaText } from "#src/lib/format/formula.ts";
+import { inSentence } from "#src/lib/format/sentence.ts";
 import { citation } from "#src/lib/lookup/citation.ts";
 import type { Candidate, EvaluateAnswer, RankAnswer } from "#src/lib/schemas/plan-answer.ts";
 import type { ResolvedPlan } from "./resolve-plan.ts";
@@ -20,7 +22,14 @@ const times = (value: number | null, factor: number): number | null => finite(va
 const keV = (energyEv: number): number => Number(kevFromEv(energyEv).toPrecision(14));
 
 /** Materials by the names that sentences use. */
-export const namesOf = ({ feature, host }: ResolvedPlan) => ({ feature: feature.label, host: host.label });
+export const namesOf = ({ feature, host }: ResolvedPlan) => ({
+  feature: spoken(feature),
+  host: spoken(host),
+});
+
+/** A material by the name that sentences use. */
+export const spoken = ({ label, formula }: { label: string; formula: string | null }): string =>
+  formula === label ? formulaText(label) : inSentence(label);
 
 /** One point in the API's units. */
 export function candidateOf(pick: PlanPick, plan: ResolvedPlan): Candidate {

@@ -59,7 +59,7 @@ export function headline(ranked: RankedPlan): string {
   if (choice === "either") {
     if (Math.abs((ranked.objectiveAdvantage ?? 1) - 1) < 0.005)
       return `Either works: phase and absorption need the same ${OBJECTIVE_WORDS[task.objective]}.`;
-    return `Either works: phase needs ${ratioText(1 / (ranked.objectiveAdvantage ?? 1))} × the ${OBJECTIVE_WORDS[task.objective]} of absorption.`;
+    return `Either works: phase needs ${ratioText(1 / (ranked.objectiveAdvantage ?? 1))}\u00a0× the ${OBJECTIVE_WORDS[task.objective]} of absorption.`;
   }
   return `Use phase contrast at ${placeText(first, contact)}.`;
 }
@@ -96,7 +96,7 @@ export function verdictSummary(ranked: RankedPlan): string {
     disagrees(doseAdvantage, objectiveAdvantage)
   ) {
     sentences.push(
-      `By ${OBJECTIVE_WORDS[task.objective]} ${winnerText(objectiveAdvantage)}, by dose ${winnerText(doseAdvantage)}: absorption’s best needs ${ratioText(doseAdvantage)} × the dose.`,
+      `By ${OBJECTIVE_WORDS[task.objective]} ${winnerText(objectiveAdvantage)}, by dose ${winnerText(doseAdvantage)}: absorption’s best needs ${ratioText(doseAdvantage)}\u00a0× the dose.`,
     );
   }
   return sentences.join(" ");
@@ -119,7 +119,7 @@ function absorptionSentence(ranked: RankedPlan, best: PlanPick, contact: number 
   const ratio =
     doseAdvantage === null || Math.abs(doseAdvantage - 1) < 0.005
       ? ""
-      : `, ${ratioText(doseAdvantage)} × the dose of phase`;
+      : `, ${ratioText(doseAdvantage)}\u00a0× the dose of phase`;
   const allowed = best.figures.forbiddenBy === null ? "" : ", beyond a limit";
   return `${who} needs ${amount}${ratio}${allowed}.`;
 }

@@ -20,7 +20,7 @@ import {
 } from "#src/lib/physics/index.ts";
 import { citation } from "#src/lib/lookup/citation.ts";
 import type { Candidate, ForbiddenCode } from "#src/lib/schemas/plan-answer.ts";
-import { candidateOf } from "./answer.ts";
+import { candidateOf, namesOf, spoken } from "./answer.ts";
 import { checkLines, type CheckLine } from "./check-lines.ts";
 import type { PlanFault } from "./faults.ts";
 import type { Objective, Use } from "./question.ts";
@@ -177,7 +177,7 @@ export function pickView(pick: PlanPick, id: string, ranked: RankedPlan, plan: R
     checks: checkLines(
       pick,
       task,
-      { feature: plan.feature.label, host: plan.host.label },
+      namesOf(plan),
       figures.technique === ranked.candidates[0]?.figures.technique ? ranked.candidates[0].figures.objective : null,
     ),
     sourceBlurUm: geometry.sourceSigmaM * FWHM_PER_SIGMA * 1e6,
@@ -282,17 +282,17 @@ function beamView({ task, feature, host, layers, setup }: ResolvedPlan): BeamVie
     sourceFwhmUm: setup.sourceFwhmUm,
     pixelUm: setup.pixelUm,
     blurUm: setup.detectorFwhmUm,
-    host: { thicknessMm: fixed(task.sample.hostThicknessM * 1e3, 12), label: host.label },
+    host: { thicknessMm: fixed(task.sample.hostThicknessM * 1e3, 12), label: spoken(host) },
     layers: task.sample.layers.map(({ position, thicknessM }, index) => ({
       position,
       thicknessMm: fixed(thicknessM * 1e3, 12),
-      label: layers[index]!.label,
+      label: spoken(layers[index]!),
     })),
     feature: {
       shape: shape.kind,
       sizeUm: fixed(shape.sizeM * 1e6, 12),
       widthUm: shape.kind === "layer" ? fixed(shape.widthM * 1e6, 12) : null,
-      label: feature.label,
+      label: spoken(feature),
     },
   };
 }

@@ -1,5 +1,6 @@
 /** A plan's question as its sentence reads: every blank in words. A text that cannot be read stands as it was typed. */
 import { formulaText } from "#src/lib/format/formula.ts";
+import { inSentence } from "#src/lib/format/sentence.ts";
 import type { KnownMaterial } from "#src/lib/lookup/finder.ts";
 import { readRecipe } from "#src/lib/lookup/recipe.ts";
 import { FormulaError, parseFormula } from "#src/lib/physics/index.ts";
@@ -67,10 +68,6 @@ export function planWords(question: PlanQuestion, find: (words: string) => Known
     also: alsoText(question, read),
   };
 }
-
-/** A name with a small first letter, unless it is an acronym or a formula. */
-const inSentence = (name: string): string =>
-  /^[A-Z][a-zà-ÿ]+(?![A-Z0-9])/.test(name) ? name.slice(0, 1).toLowerCase() + name.slice(1) : name;
 
 /** A kept material's name, else a formula with its subscripts, else the words as typed. */
 function nameText(words: string, find: (words: string) => KnownMaterial | null): string {

@@ -64,9 +64,9 @@ function Answer({ plan, result }: { plan: PlanState; result: PlanResult }) {
           {chosen && first && chosen.id !== first.id ? (
             <ChosenLine chosen={chosen} first={first} result={result} />
           ) : null}
-          {first ? <HoldsLine pick={first} /> : null}
+          {first ? <HoldsLine pick={first} answered={choice !== "none"} /> : null}
         </div>
-        {result.fringe || result.shadow ? (
+        {first && (result.fringe || result.use === "absorption") && result.shadow ? (
           <div className="answer-pair">
             <ResponsiveChart
               served={{ wide: 420, narrow: 358 }}
@@ -103,16 +103,16 @@ function ChosenLine({ chosen, first, result }: { chosen: PickView; first: PickVi
   const ratio = own !== null && best !== null && best > 0 ? own / best : null;
   return (
     <p className="note">
-      {`You chose pick ${chosen.id}: ${pickPlace(chosen)}, ${needText(result.objective, own)}${ratio === null ? "" : `, ${ratio >= 1 ? `${ratioText(ratio)} × more` : `${ratioText(1 / ratio)} × less`} than pick ${first.id}`}.`}
+      {`You chose pick ${chosen.id}: ${pickPlace(chosen)}, ${needText(result.objective, own)}${ratio === null ? "" : `, ${ratio >= 1 ? `${ratioText(ratio)}\u00a0× more` : `${ratioText(1 / ratio)}\u00a0× less`} than pick ${first.id}`}.`}
     </p>
   );
 }
 
-function HoldsLine({ pick }: { pick: PickView }) {
+function HoldsLine({ pick, answered }: { pick: PickView; answered: boolean }) {
   const open = pick.checks.filter(({ state }) => state !== "holds").length;
   return (
     <p className="holds-line">
-      {open === 0 ? (
+      {!answered ? null : open === 0 ? (
         <Flag state="holds">The model holds for this choice.</Flag>
       ) : (
         <Flag state="check">
@@ -181,8 +181,8 @@ function Ruler({ result }: { result: PlanResult }) {
             ratio === null || (ratio > 0.8 && ratio < 1.25)
               ? null
               : ratio > 1
-                ? `${ratioText(ratio)} × less ${words}`
-                : `${ratioText(1 / ratio)} × more ${words}`
+                ? `${ratioText(ratio)}\u00a0× less ${words}`
+                : `${ratioText(1 / ratio)}\u00a0× more ${words}`
           }
         />
       )}

@@ -56,7 +56,9 @@ export function CompareSection({ plan }: { plan: PlanState }) {
 }
 
 const startingIds = (result: PlanResult, picks: readonly PickView[]): string[] =>
-  [picks[0]?.id, picks[1]?.id, result.absorptionId ?? picks[2]?.id].flatMap((id) => (id === undefined ? [] : [id]));
+  [...new Set([picks[0]?.id, picks[1]?.id, result.absorptionId ?? picks[2]?.id])].flatMap((id) =>
+    id === undefined ? [] : [id],
+  );
 
 const energySpan = ([low, high]: readonly [number, number]): string =>
   low === high ? energyText(low) : `${rounded(low, 4)} to ${energyText(high)}`;
@@ -69,7 +71,7 @@ function CompareTable({ compared, result }: { compared: readonly PickView[]; res
     if (value === null || base === null || !(base > 0) || value === base) return null;
     const ratio = value / base;
     if (Math.abs(ratio - 1) < 0.005) return "the same";
-    return ratio > 1 ? `${ratioText(ratio)} × more` : `${ratioText(1 / ratio)} × less`;
+    return ratio > 1 ? `${ratioText(ratio)}\u00a0× more` : `${ratioText(1 / ratio)}\u00a0× less`;
   };
   const rows: readonly { name: string; text: (pick: PickView) => string; value: (pick: PickView) => number | null }[] =
     [
@@ -106,7 +108,11 @@ function CompareTable({ compared, result }: { compared: readonly PickView[]; res
         text: ({ candidate }) => lengthText(candidate.blurFwhmUm * 1e-6, 3),
         value: ({ candidate }) => candidate.blurFwhmUm,
       },
-      { name: "Magnification", text: ({ candidate }) => `${rounded(candidate.magnification)} ×`, value: () => null },
+      {
+        name: "Magnification",
+        text: ({ candidate }) => `${rounded(candidate.magnification)}\u00a0×`,
+        value: () => null,
+      },
       { name: "Let through", text: ({ candidate }) => percentText(candidate.transmission), value: () => null },
       {
         name: "Good choices around it",
@@ -116,7 +122,7 @@ function CompareTable({ compared, result }: { compared: readonly PickView[]; res
       },
     ];
   return (
-    <table className="list list-tight list-keep compare">
+    <table className="list list-tight list-flow compare">
       <thead>
         <tr>
           <th scope="col">
@@ -131,9 +137,11 @@ function CompareTable({ compared, result }: { compared: readonly PickView[]; res
         <tr>
           <th scope="row">Choice</th>
           {compared.map((pick) => (
-            <td key={pick.id}>
-              {pickPlace(pick)}
-              <small>{pick.candidate.technique === "phase" ? "phase contrast" : "absorption"}</small>
+            <td key={pick.id} data-label={`Pick ${pick.id}`}>
+              <span>
+                {pickPlace(pick)}
+                <small>{pick.candidate.technique === "phase" ? "phase contrast" : "absorption"}</small>
+              </span>
             </td>
           ))}
         </tr>
@@ -143,9 +151,11 @@ function CompareTable({ compared, result }: { compared: readonly PickView[]; res
             {compared.map((pick) => {
               const difference = pick === first ? null : times(row.value(pick), row.value(first));
               return (
-                <td key={pick.id}>
-                  {row.text(pick)}
-                  {difference === null ? null : <small>{difference}</small>}
+                <td key={pick.id} data-label={`Pick ${pick.id}`}>
+                  <span>
+                    {row.text(pick)}
+                    {difference === null ? null : <small>{difference}</small>}
+                  </span>
                 </td>
               );
             })}

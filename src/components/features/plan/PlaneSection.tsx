@@ -159,9 +159,14 @@ function quantityOf(quantity: PlaneQuantity, { objective }: PlanResult): Drawn {
     case "time":
       return { label: "Time needed", unit: "s", format: (value) => timeText(value) };
     case "advantage":
-      return { label: "Gain over absorption", unit: "×", better: "more", format: (value) => `${ratioText(value)} ×` };
+      return {
+        label: "Gain over absorption",
+        unit: "×",
+        better: "more",
+        format: (value) => `${ratioText(value)}\u00a0×`,
+      };
     case "gain":
-      return { label: "Gain by retrieval", unit: "×", better: "more", format: (value) => `${ratioText(value)} ×` };
+      return { label: "Gain by retrieval", unit: "×", better: "more", format: (value) => `${ratioText(value)}\u00a0×` };
     case "transmission":
       return { label: "Let through the sample", unit: "", better: "more", format: (value) => percentText(value) };
   }

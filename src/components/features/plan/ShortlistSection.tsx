@@ -206,7 +206,9 @@ function Row({ pick, result, gain, chosen, onChoose, onKeyDown }: RowProps) {
       </td>
       {gain ? (
         <td className="num" data-label="Gain by retrieval">
-          {phase ? `${ratioText((result.use === "tomography" ? candidate.gainCt : candidate.gain2d) ?? 1)} ×` : "none"}
+          {phase
+            ? `${ratioText((result.use === "tomography" ? candidate.gainCt : candidate.gain2d) ?? 1)}\u00a0×`
+            : "none"}
         </td>
       ) : null}
     </tr>

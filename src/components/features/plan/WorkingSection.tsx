@@ -90,7 +90,7 @@ export function WorkingSection({ result, stale }: { result: PlanResult | null; s
 }
 
 const effect = (factor: number): string =>
-  factor >= 1 ? `${ratioText(factor)} × less` : `${ratioText(1 / factor)} × more`;
+  factor >= 1 ? `${ratioText(factor)}\u00a0× less` : `${ratioText(1 / factor)}\u00a0× more`;
 
 function stepsOf({ working, use, picks, absorptionId }: PlanResult): Step[] {
   if (!working) return [];
@@ -163,8 +163,8 @@ function stepsOf({ working, use, picks, absorptionId }: PlanResult): Step[] {
   if (Math.abs(factors.counts - 1) > 1e-6) {
     steps.push({
       name: "Counts asked for in a pixel",
-      phase: `${rounded(phase.countsFactor, 2)} × what visibility needs`,
-      absorption: `${rounded(absorption.countsFactor, 2)} × what visibility needs`,
+      phase: `${rounded(phase.countsFactor, 2)}\u00a0× what visibility needs`,
+      absorption: `${rounded(absorption.countsFactor, 2)}\u00a0× what visibility needs`,
       factor: factors.counts,
       words: "the floor of counts",
       formula: "Where the floor of counts decides, more photons are taken than visibility needs.",

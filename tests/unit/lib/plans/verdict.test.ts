@@ -87,7 +87,7 @@ describe("pairs that explain themselves", () => {
     const text = answer({ use: "retrieval" }).picks[0]!.candidate.warnings.find(
       ({ code }) => code === "opposedPair",
     )!.message;
-    expect(text).toMatch(/Opposed pair.*use δ\/β of Water/);
+    expect(text).toMatch(/Opposed pair.*use δ\/β of water/);
     expect(warned(answer({ use: "tomography" }))).toContain("opposedPair");
     expect(warned(answer({}))).not.toContain("opposedPair");
     expect(warned(answer({ use: "retrieval", feature: "hydroxyapatite" }))).not.toContain("opposedPair");
