@@ -30,6 +30,8 @@ export default defineConfig({
           globalSetup: ["tests/support/server.global.ts"],
           testTimeout: 120_000,
           hookTimeout: 120_000,
+          // A page on a busy machine takes its time; what never comes still fails.
+          expect: { poll: { timeout: 15_000 } },
           fileParallelism: false,
         },
       },

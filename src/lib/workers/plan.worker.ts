@@ -24,6 +24,7 @@ import type { PlanAsk, PlanTold } from "./protocol.ts";
 z.config({ jitless: true });
 
 const tell = (message: PlanTold): void => self.postMessage(message);
+const PROGRESS_EVERY_MS = 150;
 const elements = new Map<number, Promise<LoadedElement>>();
 const found = new Map<string, readonly KnownMaterial[]>();
 let latest = 0;
@@ -66,8 +67,12 @@ async function answerPlan({ job, question, known, tables: info }: Extract<PlanAs
   }
   const tables = tablesOf(await loaded(request, finder, info), info);
   if (job < latest) return;
+  let told = performance.now();
   const answered = viewJob(request, objectiveProposed, tables, finder.lookup, new Date(), {
     onProgress: (share) => {
+      // The page draws each; more often than eyes follow would only keep it busy.
+      if (performance.now() - told < PROGRESS_EVERY_MS) return true;
+      told = performance.now();
       tell({ kind: "progress", job, share });
       return true;
     },
