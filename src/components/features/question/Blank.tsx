@@ -64,7 +64,7 @@ export function BlankPanel({
   onClose,
   children,
 }: PanelProps) {
-  const panel = useRef<HTMLFormElement>(null);
+  const panel = useRef<HTMLDivElement>(null);
   const headingId = useId();
   useEffect(() => {
     const element = panel.current;
@@ -80,36 +80,39 @@ export function BlankPanel({
   return (
     <>
       <div className="panel-scrim" onClick={onClose} aria-hidden="true" />
-      <form
+      <div
         ref={panel}
         id={panelId(field)}
         className={WIDTHS[width]}
         role="dialog"
         aria-labelledby={headingId}
-        onSubmit={(event) => {
-          event.preventDefault();
-          if (canTake) onTake();
-        }}
         onKeyDown={(event) => {
           if (event.key === "Escape" && !event.defaultPrevented) onClose();
           else if (event.key === "Tab") keepInside(event, panel.current);
         }}
-        noValidate
       >
-        <div className="panel-head">
-          <h3 id={headingId}>{title}</h3>
-          <button type="button" className="btn btn-small" onClick={onClose}>
-            Close
-          </button>
-        </div>
-        {children}
-        <div className="panel-foot">
-          <button type="submit" className="btn btn-go" disabled={!canTake}>
-            {takeText}
-          </button>
-          <p className="note">{help ?? "Enter takes it, Esc keeps the old one."}</p>
-        </div>
-      </form>
+        <form
+          onSubmit={(event) => {
+            event.preventDefault();
+            if (canTake) onTake();
+          }}
+          noValidate
+        >
+          <div className="panel-head">
+            <h3 id={headingId}>{title}</h3>
+            <button type="button" className="btn btn-small" onClick={onClose}>
+              Close
+            </button>
+          </div>
+          {children}
+          <div className="panel-foot">
+            <button type="submit" className="btn btn-go" disabled={!canTake}>
+              {takeText}
+            </button>
+            <p className="note">{help ?? "Enter takes it, Esc keeps the old one."}</p>
+          </div>
+        </form>
+      </div>
     </>
   );
 }

@@ -6,7 +6,17 @@ import { Fault } from "#src/components/ui/Messages.tsx";
 import { materialFinder } from "#src/lib/lookup/finder.ts";
 import { planWords } from "#src/lib/plans/words.ts";
 import { PLAN_LIMITS } from "#src/lib/schemas/plan-choices.ts";
-import { added, type LayerRow, layersOf, mirrored, moved, rowFault, rowsOf, wholeText } from "./layer-rows.ts";
+import {
+  added,
+  type LayerRow,
+  layersOf,
+  mirrored,
+  moved,
+  type RowFault,
+  rowFault,
+  rowsOf,
+  wholeText,
+} from "./layer-rows.ts";
 import { LayerRowFields } from "./LayerRowFields.tsx";
 import { LayersStrip } from "./LayersStrip.tsx";
 import type { EditorProps } from "./props.ts";
@@ -30,7 +40,12 @@ export function HostEditor({ field, question, known, learn, onTake, onClose }: E
   const isFull = layers >= PLAN_LIMITS.layers;
   const isOneSided = layers > 0 && (rows[0]?.isHost === true || rows.at(-1)?.isHost === true);
   const mayMirror = isOneSided && layers * 2 <= PLAN_LIMITS.layers;
-  const faults = new Map(rows.map((row) => [row.id, row.isHost || named.pending ? null : rowFault(row, finder)]));
+  const faultOf = (row: LayerRow): RowFault | null => {
+    const fault = row.isHost ? null : rowFault(row, finder);
+    // A name that is being asked for is not yet unknown.
+    return named.pending && fault?.field !== "thickness" ? null : fault;
+  };
+  const faults = new Map(rows.map((row) => [row.id, faultOf(row)]));
   const whole = wholeText(rows.map((row) => (row.isHost ? draft.question.thickness : row.thickness)));
 
   const move = (index: number, step: -1 | 1): void => {

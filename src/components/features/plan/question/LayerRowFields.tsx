@@ -1,14 +1,15 @@
 /** One layer, or the host, as a table row. */
 import type { KeyboardEvent, ReactNode } from "react";
 import { MaterialCombobox } from "#src/components/features/question/MaterialCombobox.tsx";
+import { Fault } from "#src/components/ui/Messages.tsx";
 import type { KnownMaterial } from "#src/lib/lookup/finder.ts";
-import type { LayerFields, LayerRow } from "./layer-rows.ts";
+import type { LayerFields, LayerRow, RowFault } from "./layer-rows.ts";
 
 interface Props {
   readonly row: LayerRow;
   readonly index: number;
   readonly isLast: boolean;
-  readonly fault: string | null;
+  readonly fault: RowFault | null;
   readonly onChange: (fields: LayerFields) => void;
   readonly onPick: (material: KnownMaterial) => void;
   readonly onMove: (step: -1 | 1) => void;
@@ -18,6 +19,8 @@ interface Props {
 export function LayerRowFields({ row, index, isLast, fault, onChange, onPick, onMove, onRemove }: Props) {
   const named = row.material || `layer ${index + 1}`;
   const faultId = fault === null ? undefined : `layer-${row.id}-fault`;
+  // A field that is still empty is asked for, not wrong.
+  const isWrong = (field: keyof LayerFields): boolean => fault?.field === field && row[field].trim() !== "";
   const onKeyDown = (event: KeyboardEvent): void => {
     if (!event.altKey || (event.key !== "ArrowUp" && event.key !== "ArrowDown")) return;
     // Before the material field takes the key for its list.
@@ -31,6 +34,7 @@ export function LayerRowFields({ row, index, isLast, fault, onChange, onPick, on
       style={{ width: "8ch" }}
       type="text"
       aria-label={label}
+      aria-invalid={isWrong(field) ? "true" : undefined}
       aria-describedby={faultId}
       value={row[field]}
       maxLength={32}
@@ -49,15 +53,18 @@ export function LayerRowFields({ row, index, isLast, fault, onChange, onPick, on
           inputClass="input-inline"
           label={`Material of layer ${index + 1}`}
           value={row.material}
+          invalid={isWrong("material")}
           describedBy={faultId}
           onChange={(material) => onChange({ material })}
           onPick={onPick}
         />
-        {fault === null ? null : (
-          <p className="note" id={faultId}>
-            {fault}
-          </p>
-        )}
+        <div id={faultId} aria-live="polite">
+          {fault === null ? null : isWrong(fault.field) ? (
+            <Fault>{fault.message}</Fault>
+          ) : (
+            <p className="note">{fault.message}</p>
+          )}
+        </div>
       </td>
       <td data-label="Thickness">{input("thickness", `Thickness of ${named}`)}</td>
       <td data-label="Density, g/cm³">{input("density", `Density of ${named}, empty for the handbook’s`)}</td>

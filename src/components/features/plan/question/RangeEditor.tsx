@@ -50,13 +50,13 @@ export function RangeEditor(props: Props) {
       title={props.title}
       takeText={kind === "offered" ? "Take all it offers" : "Take these"}
       width="medium"
-      help={props.help}
+      help={kind === "list" ? "Esc keeps the old value." : props.help}
       canTake={kind === "offered" || reading?.ok === true}
       onTake={() => props.onTake({ [field]: text })}
       onClose={props.onClose}
     >
       <Setting
-        label={props.title}
+        label="Rank"
         readings={{ [field]: reading }}
         note={
           kind === "range"

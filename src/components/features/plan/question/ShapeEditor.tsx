@@ -45,6 +45,7 @@ export function ShapeEditor({ field, question, onTake, onClose }: EditorProps) {
       value={draft.text(name)}
       reading={draft.reading(name)}
       placeholder={placeholder ?? ""}
+      isFirst={name === "size" && field === "size"}
       onChange={draft.type(name)}
     />
   );
@@ -76,18 +77,18 @@ export function ShapeEditor({ field, question, onTake, onClose }: EditorProps) {
             : `Diameter, not radius.${shape === "fibre" ? " Five diameters of its length if left empty." : ""} “20um”, “0.02 mm” and “20000 nm” are all read.`
         }
       >
-        {shape === "sphere" ? <>{input("size", "Diameter of the sphere")} across.</> : null}
+        {shape === "sphere" ? <span>{input("size", "Diameter of the sphere")} across.</span> : null}
         {shape === "fibre" ? (
-          <>
+          <span>
             {input("size", "Diameter of the fibre")} across, {input("length", "Length of the fibre used", "5 ×")} of its
             length seen at once.
-          </>
+          </span>
         ) : null}
         {shape === "layer" ? (
-          <>
+          <span>
             {input("size", "Depth along the beam")} along the beam, {input("width", "Width across the beam")} across it,{" "}
             {input("length", "Length of the layer used", "5 ×")} long.
-          </>
+          </span>
         ) : null}
       </Setting>
     </BlankPanel>

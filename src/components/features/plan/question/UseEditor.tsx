@@ -70,12 +70,11 @@ export function UseEditor({ field, question, onTake, onClose }: EditorProps) {
           <div className="setting-line">
             {use === "tomography" ? (
               <span>
-                {input("projections", "Projections", "π/2 × width")} projections; empty: π/2 for each pixel across the
-                host.
+                {input("projections", "Projections", "")} projections; empty: π/2 for each pixel across the host.
               </span>
             ) : null}
             <span>
-              Near field up to {input("nearField", "Largest πλz times spatial frequency squared", "0.8")} for πλzu² at
+              Near field: πλzu² up to {input("nearField", "Largest πλz times the squared spatial frequency", "0.8")} at
               the finest detail.
             </span>
             {fields.map((name) => {

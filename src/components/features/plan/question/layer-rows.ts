@@ -37,7 +37,7 @@ export function rowsOf(layers: string): LayerRow[] {
 }
 
 // A line's fields are parted by semicolons and tabs.
-const plain = (text: string): string => text.replace(/[;\t\n]+/g, " ").trim();
+const plain = (text: string): string => text.replace(/[;\s]+/g, " ").trim();
 
 export function layersOf(rows: readonly LayerRow[]): string {
   const host = hostAt(rows);
@@ -85,16 +85,23 @@ export function mirrored(rows: readonly LayerRow[]): LayerRow[] {
   ];
 }
 
+export interface RowFault {
+  readonly field: keyof LayerFields;
+  readonly message: string;
+}
+
 /** What keeps a layer from being taken; null when it can be. */
-export function rowFault(row: LayerRow, finder: MaterialFinder): string | null {
+export function rowFault(row: LayerRow, finder: MaterialFinder): RowFault | null {
   try {
-    const thicknessM = parseQuantity(row.thickness, "length", { defaultUnit: "mm" });
-    if (!(thicknessM > 0)) return "A thickness is above 0, such as 1 mm.";
-    if (row.material.trim() === "") return "Name its material, such as polypropylene.";
+    if (!(parseQuantity(row.thickness, "length", { defaultUnit: "mm" }) > 0))
+      return { field: "thickness", message: "A thickness is above 0, such as 1 mm." };
+    if (row.material.trim() === "") return { field: "material", message: "Name its material, such as polypropylene." };
     statedMaterial({ ...DEFAULT_QUESTION, material: row.material.trim(), density: row.density.trim() }, finder);
     return null;
   } catch (error) {
-    if (error instanceof QuantityError || error instanceof QuestionError) return error.message;
+    if (error instanceof QuantityError) return { field: "thickness", message: error.message };
+    if (error instanceof QuestionError)
+      return { field: error.fault.field === "density" ? "density" : "material", message: error.message };
     throw error;
   }
 }

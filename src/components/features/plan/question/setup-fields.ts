@@ -16,7 +16,7 @@ export interface Screen {
   readonly density: string;
 }
 
-const plain = (text: string): string => text.replace(/[;\t\n]+/g, " ").trim();
+const plain = (text: string): string => text.replace(/[;\s]+/g, " ").trim();
 const isNumber = (text: string): boolean => /^\s*\d*\.?\d+(?:e-?\d{1,3})?\s*$/i.test(text);
 
 /** A bare number up to 1 is a share in the address; fields count in percent. */
@@ -59,7 +59,7 @@ export function screenReading(screen: Screen, question: PlanQuestion, finder: Ma
     },
     finder,
   );
-  return fault === null ? null : { ok: false, words: fault };
+  return fault === null ? null : { ok: false, words: fault.message };
 }
 
 const exponential = (value: number): string => value.toExponential().replace("e+", "e");
