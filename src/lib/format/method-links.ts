@@ -14,6 +14,17 @@ export const METHOD_TOPICS = [
   "keyboard",
   "errors",
   "constants",
+  "geometry",
+  "contrast-of-a-feature",
+  "bandwidth",
+  "detectability",
+  "efficiency",
+  "dose-of-a-plan",
+  "uses",
+  "retrieval",
+  "tomography-plan",
+  "ranking",
+  "plan-warnings",
 ] as const;
 export type MethodTopic = (typeof METHOD_TOPICS)[number];
 

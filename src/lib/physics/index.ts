@@ -40,6 +40,7 @@ export { type Beam, beamsOf } from "./plan/beam.ts";
 export * from "./plan/gains.ts";
 export {
   defaultProjections,
+  EARLY_ZERO_BELOW,
   firstReversal,
   type Forbidden,
   leastDetailM,

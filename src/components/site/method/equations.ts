@@ -1,11 +1,9 @@
 /** The equations of the method page in reading order: TeX, how each part is read aloud, and what its symbols are. */
+import type { Equation } from "./equation.ts";
+import { CONTRAST_EQUATIONS } from "./equations-contrast.ts";
+import { USE_EQUATIONS } from "./equations-uses.ts";
 
-export interface Equation {
-  /** Parts of one line; they wrap on a phone. */
-  readonly parts: readonly { readonly tex: string; readonly spoken: string }[];
-  /** Symbol in TeX, then its meaning. */
-  readonly where?: readonly (readonly [string, string])[];
-}
+export type { Equation } from "./equation.ts";
 
 const tex = String.raw;
 
@@ -220,6 +218,8 @@ export const EQUATIONS = {
       },
     ],
   },
+  ...CONTRAST_EQUATIONS,
+  ...USE_EQUATIONS,
 } as const satisfies Record<string, Equation>;
 
 export type EquationKey = keyof typeof EQUATIONS;

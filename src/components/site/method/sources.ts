@@ -52,4 +52,49 @@ export const SOURCES = [
     citation: "ICRU Report 44: Tissue Substitutes in Radiation Dosimetry and Measurement (1989).",
     use: "Compositions of tissues in the handbook.",
   },
+  {
+    key: "pogany97",
+    citation: "Pogany, Gao, Wilkins: Rev. Sci. Instrum. 68, 2774 (1997).",
+    use: "Contrast transfer of phase and attenuation over distance.",
+  },
+  {
+    key: "cloetens99",
+    citation: "Cloetens et al.: Appl. Phys. Lett. 75, 2912 (1999).",
+    use: "Contrast transfer at several distances.",
+  },
+  {
+    key: "icru54",
+    citation: "ICRU Report 54: Medical Imaging – The Assessment of Image Quality (1996).",
+    use: "Ideal and non-prewhitening observers.",
+  },
+  {
+    key: "rose48",
+    citation: "Rose: J. Opt. Soc. Am. 38, 196 (1948).",
+    use: "Threshold of detection.",
+  },
+  {
+    key: "paganin02",
+    citation: "Paganin, Mayo, Gureyev, Miller, Wilkins: J. Microsc. 206, 33 (2002).",
+    use: "Filter of single-material retrieval.",
+  },
+  {
+    key: "nesterets14",
+    citation: "Nesterets, Gureyev: J. Phys. D 47, 105402 (2014).",
+    use: "Gains of retrieval, and their limit.",
+  },
+  {
+    key: "kitchen17",
+    citation: "Kitchen et al.: Sci. Rep. 7, 15953 (2017).",
+    use: "Gains and dose reductions as measured.",
+  },
+  {
+    key: "hegerl76",
+    citation: "Hegerl, Hoppe: Z. Naturforsch. A 31, 1717 (1976).",
+    use: "Sharing a dose out among projections.",
+  },
+  {
+    key: "grodzins83",
+    citation: "Grodzins: Nucl. Instrum. Methods 206, 541 (1983).",
+    use: "The thickness that absorption likes best.",
+  },
 ] as const;
