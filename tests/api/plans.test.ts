@@ -1,4 +1,5 @@
 /** Plans over the API: the figures of a known pair, the shortlist, and everything that is refused. */
+import fc from "fast-check";
 import { afterAll, describe, expect, it } from "vitest";
 import type { EvaluateAnswer, RankAnswer } from "#src/lib/schemas/plan-answer.ts";
 import { call, good, post, postText, refused, WATER } from "#tests/support/api.ts";
@@ -303,5 +304,68 @@ describe("extremes", () => {
       expect(answer.status, answer.body.slice(0, 300)).toBe(200);
       expect(answer.body).not.toMatch(/NaN|Infinity/);
     }
+  });
+});
+
+describe("random requests", () => {
+  it("are answered or refused, never with a fault of ours", async () => {
+    const odd = fc.oneof(
+      fc.constantFrom(
+        0,
+        -1,
+        1e-30,
+        1e30,
+        0.5,
+        3,
+        "20",
+        null,
+        true,
+        [],
+        {},
+        [20],
+        { from: 1, to: 2, count: 3 },
+        "direct",
+      ),
+      fc.double({ noNaN: true, noDefaultInfinity: true }),
+      fc.string({ maxLength: 12 }),
+    );
+    const paths = [
+      ["feature", "sizeUm"],
+      ["feature", "shape"],
+      ["feature", "material"],
+      ["feature", "widthUm"],
+      ["host", "thicknessMm"],
+      ["host", "material"],
+      ["layers"],
+      ["setup", "sourceDistanceM"],
+      ["setup", "detectorFwhmUm"],
+      ["setup", "pixelUm"],
+      ["setup", "efficiency"],
+      ["setup", "bandwidth"],
+      ["setup", "fluxPerSMm2"],
+      ["setup", "energiesKeV"],
+      ["setup", "distancesM"],
+      ["use"],
+      ["objective"],
+      ["limits"],
+      ["threshold"],
+      ["minimumCounts"],
+      ["projections"],
+    ];
+    const changes = fc.array(fc.tuple(fc.constantFrom(...paths), odd), { minLength: 1, maxLength: 3 });
+    const statuses = new Map<number, number>();
+    for (const changed of fc.sample(changes, { numRuns: 400, seed: 9 })) {
+      const body = structuredClone(rankBody()) as Record<string, unknown>;
+      for (const [[first, second], value] of changed) {
+        if (second === undefined) body[first!] = value;
+        else (body[first!] as Record<string, unknown>)[second] = value;
+      }
+      const { status, body: text } = await post("/plans/rank", body);
+      statuses.set(status, (statuses.get(status) ?? 0) + 1);
+      expect([200, 400, 404, 422], text.slice(0, 300)).toContain(status);
+      expect(text).not.toMatch(/NaN|Infinity/);
+    }
+    expect(statuses.get(200)!).toBeGreaterThan(10);
+    expect(statuses.get(422)!).toBeGreaterThan(100);
   });
 });

@@ -1,5 +1,5 @@
 /** The Plan page's island: the same sections on the server and in the browser, from one view. */
-import { useMemo } from "react";
+import { memo, useDeferredValue, useMemo } from "react";
 import { Queries } from "../constants/Queries.tsx";
 import { Notice } from "#src/components/ui/Messages.tsx";
 import { AnswerSection } from "./AnswerSection.tsx";
@@ -23,11 +23,21 @@ export default function PlanIsland({ start }: { start: string }) {
 
 function Sections({ start }: { start: PlanStart }) {
   const plan = usePlan(start);
+  // The figures are drawn in slices between what a person does: typing and pressing never wait for them.
+  const later = useDeferredValue(plan);
   usePickKeys(plan);
   return (
     <>
       <PlanQuestion plan={plan} />
       <State plan={plan} />
+      <Figures plan={later} />
+    </>
+  );
+}
+
+const Figures = memo(function Figures({ plan }: { plan: PlanState }) {
+  return (
+    <>
       <AnswerSection plan={plan} />
       <ShortlistSection plan={plan} />
       <WorkingSection result={plan.shown} stale={plan.stale} />
@@ -35,7 +45,7 @@ function Sections({ start }: { start: PlanStart }) {
       <PickBar plan={plan} />
     </>
   );
-}
+});
 
 /** What is going on: a ranking under way, an answer to an older question, trouble. */
 function State({ plan }: { plan: PlanState }) {
