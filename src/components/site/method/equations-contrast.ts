@@ -154,7 +154,7 @@ export const CONTRAST_EQUATIONS = {
   fluence: {
     parts: [
       {
-        tex: tex`n = \max\Bigl(\frac{k^2}{\eta T S}, \frac{N_{\min}}{\eta T p^2}\Bigr)`,
+        tex: tex`n = \max\Bigl(\frac{k^2}{\eta T S}, \; \frac{N_{\min}}{\eta T p^2}\Bigr)`,
         spoken: "n equals the larger of k squared over eta T S and N min over eta T p squared",
       },
       { tex: tex`N = \eta \, n \, T \, p^2`, spoken: "N equals eta n T p squared" },
