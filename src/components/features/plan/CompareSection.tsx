@@ -180,7 +180,10 @@ function Holds({ pick }: { pick: PickView }) {
               {NAMES[state]}
             </b>
             <span>
-              {text} <a href="/method#plan-warnings">More</a>
+              {text}{" "}
+              <a href={about === "tables" || about === "density" ? "/method#ranking" : `/method#warning-${about}`}>
+                More
+              </a>
             </span>
           </li>
         ))}
