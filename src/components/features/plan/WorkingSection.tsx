@@ -90,7 +90,11 @@ export function WorkingSection({ result, stale }: { result: PlanResult | null; s
 }
 
 const effect = (factor: number): string =>
-  factor >= 1 ? `${ratioText(factor)}\u00a0× less` : `${ratioText(1 / factor)}\u00a0× more`;
+  Math.abs(factor - 1) < 0.005
+    ? "as much"
+    : factor >= 1
+      ? `${ratioText(factor)}\u00a0× less`
+      : `${ratioText(1 / factor)}\u00a0× more`;
 
 function stepsOf({ working, use, picks, absorptionId }: PlanResult): Step[] {
   if (!working) return [];
