@@ -137,11 +137,52 @@ async function served(): Promise<void> {
   const page = await autocannon({ url: `${second.url}/constants`, connections: 10, duration: 8 });
   say("Page /constants, requests a second", page.requests.average.toFixed(0));
 
+  const asked = await autocannon({ url: `${second.url}/plan`, connections: 10, duration: 8 });
+  say("Page /plan as nobody changed it, requests a second", asked.requests.average.toFixed(0));
+  await rankings(second.url);
+
   const worst = await worstRequest(second.url);
   say("Worst legal request: 2,000 energies, 32 parts of 98 elements", ms(worst));
   for (const path of ["/", "/constants", "/plan", "/materials", "/method"]) await scriptBytes(second.url, path);
   await second.stop();
   rmSync(fresh, { recursive: true, force: true });
+}
+
+/** Rankings one after the other, and how long health takes to answer meanwhile: what the main thread is held up. */
+async function rankings(url: string): Promise<void> {
+  const body = JSON.stringify({
+    feature: { material: { materialId: "pmma" }, shape: "fibre", sizeUm: 20 },
+    host: { material: { materialId: "water" }, thicknessMm: 5 },
+    setup: { setupId: "fine-parallel" },
+    use: "tomography",
+  });
+  const took: number[] = [];
+  const waited: number[] = [];
+  let going = true;
+  const probing = (async () => {
+    while (going) {
+      const begun = performance.now();
+      await (await fetch(`${url}/api/v1/health`)).arrayBuffer();
+      waited.push(performance.now() - begun);
+      await new Promise((resolve) => setTimeout(resolve, 10));
+    }
+  })();
+  for (let i = 0; i < 20; i++) {
+    const begun = performance.now();
+    const answer = await fetch(`${url}/api/v1/plans/rank`, {
+      method: "POST",
+      headers: { "content-type": "application/json" },
+      body,
+    });
+    await answer.arrayBuffer();
+    if (answer.status !== 200) throw new Error(`A ranking was refused: ${answer.status}`);
+    took.push(performance.now() - begun);
+  }
+  going = false;
+  await probing;
+  const [ranks, waits] = [took, waited].map((list) => list.sort((a, b) => a - b)) as [number[], number[]];
+  say("Ranking an example setup over the API, median", ms(quantile(ranks, 0.5)));
+  say("  health meanwhile, 99th percentile", ms(quantile(waits, 0.99)), "100 ms");
 }
 
 async function worstRequest(url: string): Promise<number> {
