@@ -118,6 +118,10 @@ describe("picking", () => {
     await page.keyboard.press("3");
     await expect.poll(() => page.locator("tr[data-pick='3']").getAttribute("aria-selected")).toBe("true");
     await expect.poll(() => page.locator("#holds").innerText()).toContain("pick 3");
+    await page.keyboard.press("t");
+    await page.locator(".as-table[open] table").waitFor();
+    await page.keyboard.press("d");
+    await page.locator("details.draw[open]").waitFor();
     await page.getByRole("combobox", { name: "Order of the list" }).selectOption({ label: "Shortest time" });
     const times = await page.locator(".shortlist td[data-label=Time]").allInnerTexts();
     const seconds = times.map((text) => {

@@ -1,6 +1,6 @@
 /**
  * Single keys that work while no field has focus: `/` goes to what is marked data-shortcut="/" or to the first blank,
- * `?` to the list of keys. They can be switched off on the method page (WCAG 2.1.4); the choice stays in this browser.
+ * `?` to the list of keys; a letter or digit presses what is marked with it. They can be switched off on the method page (WCAG 2.1.4); the choice stays in this browser.
  */
 const STORAGE_KEY = "rimelight-shortcuts";
 const KEY_LIST = "/method#keyboard";
@@ -14,7 +14,10 @@ function shortcutsOn(): boolean {
 }
 
 function isTyping(target: EventTarget | null): boolean {
-  return target instanceof HTMLElement && (target.isContentEditable || target.matches("input, textarea, select"));
+  return (
+    target instanceof HTMLElement &&
+    (target.isContentEditable || target.matches("input, textarea, select") || target.closest("[role=dialog]") !== null)
+  );
 }
 
 document.addEventListener("keydown", (event) => {
@@ -27,6 +30,8 @@ document.addEventListener("keydown", (event) => {
     goal.focus();
   } else if (event.key === "?") {
     location.assign(KEY_LIST);
+  } else if (/^[a-z1-9]$/.test(event.key)) {
+    document.querySelector<HTMLElement>(`main [data-shortcut="${event.key}"]`)?.click();
   }
 });
 

@@ -87,7 +87,7 @@ export function openApiDocument(): Json {
       title: "Rimelight API",
       version: "1",
       description:
-        "Optical constants for X-ray imaging. Units stand in the names; what has no value is null. Version 1 only ever gains fields.",
+        "Optical constants for X-ray imaging, and plans that rank photon energies and distances on them. Units stand in the names; what has no value is null. Version 1 only ever gains fields.",
       license: { name: "MIT", identifier: "MIT" },
     },
     servers: [{ url: "/api/v1" }],

@@ -1,5 +1,5 @@
 /** Where no point is allowed: the one that misses by least, and single changes that would let a point in. */
-import { leastDetailM, type Lane, type RankedPlan } from "#src/lib/physics/index.ts";
+import { countsFeatureDose, leastDetailM, type Lane, type RankedPlan } from "#src/lib/physics/index.ts";
 import {
   distanceText,
   doseText,
@@ -41,8 +41,7 @@ function limitMiss({ plane, task }: RankedPlan): Miss | null {
     `The nearest miss, ${energyText(beam.energyEv / 1000)} and ${distanceText(lane.geometry.distanceM)}, needs ${objectiveText(task.objective, plane.objective[best]!)}`,
   ];
   const changes: string[] = [];
-  const perFluence =
-    task.sample.host.material.densityKgPerM3 < 10 ? beam.featureDosePerFluence : beam.hostDosePerFluence;
+  const perFluence = countsFeatureDose(task.sample) ? beam.featureDosePerFluence : beam.hostDosePerFluence;
   const dose = perFluence === null ? null : perFluence * fluence;
   const time = beam.fluxPerSM2 === null ? null : fluence / beam.fluxPerSM2;
   const over: number[] = [];

@@ -1,7 +1,7 @@
 /** Words of a pick: where it stands, why it is on the list, what it needs. */
 import { distanceText, doseText, energyText, fluenceText, timeText } from "#src/lib/format/plan-quantities.ts";
 import type { WhyCode } from "#src/lib/schemas/plan-answer.ts";
-import type { Objective, Use } from "./question.ts";
+import type { Objective } from "./question.ts";
 import type { PickView, PlanResult } from "./view.ts";
 
 export const WHY_WORDS: Readonly<Record<WhyCode, string>> = {
@@ -12,13 +12,6 @@ export const WHY_WORDS: Readonly<Record<WhyCode, string>> = {
   mostTransmitted: "most let through",
   besideEdge: "beside an edge",
   nextBest: "next best",
-};
-
-export const USE_WORDS: Readonly<Record<Use, string>> = {
-  absorption: "absorption alone",
-  direct: "looking at the images directly",
-  retrieval: "retrieval from one distance",
-  tomography: "tomography",
 };
 
 /** "20 keV, 0.3 m". */

@@ -3,8 +3,9 @@
  * rounded here once; the figures of picks are the API's own.
  */
 import {
-  contrastProfile,
   acrossM,
+  contrastProfile,
+  countsFeatureDose,
   type Edge,
   FWHM_PER_SIGMA,
   kevFromEv,
@@ -26,7 +27,7 @@ import type { PlanFault } from "./faults.ts";
 import type { Objective, Use } from "./question.ts";
 import type { ResolvedPlan } from "./resolve-plan.ts";
 import { type Miss, missOf } from "./miss.ts";
-import { answerSentences, type AnswerSentences } from "./verdict-words.ts";
+import { answerSentences, type AnswerSentences, contactDistanceM, spokenDoseGy } from "./verdict-words.ts";
 
 export interface PickView {
   readonly id: string;
@@ -50,8 +51,8 @@ export interface ProfileView {
   readonly largest: number;
 }
 
-export const PLANE_QUANTITIES = ["objective", "time", "advantage", "gain", "transmission"] as const;
-export type PlaneQuantity = (typeof PLANE_QUANTITIES)[number];
+/** What the objective needs, the time, absorption's need over the point's own, retrieval's gain, the sample's transmission. */
+export type PlaneQuantity = "objective" | "time" | "advantage" | "gain" | "transmission";
 
 export interface PlaneView {
   readonly energiesKeV: readonly number[];
@@ -157,7 +158,7 @@ export function planResult(
       first && absorptionBest && task.use !== "absorption" ? workingOf(task, first, absorptionBest.figures) : null,
     miss: missOf(ranked),
     beam: beamView(plan),
-    featureDose: task.sample.host.material.densityKgPerM3 < 10,
+    featureDose: countsFeatureDose(task.sample),
     flux: task.setup.fluxPerSM2 !== null,
     citation: citation(tables.version, task.tabulation, options.date),
   };
@@ -167,12 +168,12 @@ export function pickView(pick: PlanPick, id: string, ranked: RankedPlan, plan: R
   const { figures } = pick;
   const { task } = ranked;
   const { geometry } = figures;
-  const contact = contactM(ranked);
+  const contact = contactDistanceM(ranked);
   return {
     id,
     candidate: candidateOf(pick, plan),
     objective: figures.objective === null ? null : figures.objective * (task.objective === "fluence" ? 1e-12 : 1),
-    doseGy: task.sample.host.material.densityKgPerM3 < 10 ? figures.featureDoseGy : figures.entranceDoseGy,
+    doseGy: spokenDoseGy(task, pick),
     inContact: contact !== null && geometry.distanceM <= contact * (1 + 1e-9),
     checks: checkLines(
       pick,
@@ -185,12 +186,6 @@ export function pickView(pick: PlanPick, id: string, ranked: RankedPlan, plan: R
     pixelUm: geometry.pixelM * 1e6,
     forbiddenBy: figures.forbiddenBy,
   };
-}
-
-/** Shortest distance outside the sample. */
-function contactM({ plane }: RankedPlan): number | null {
-  const lane = plane.lanes.find(({ insideSample }) => !insideSample);
-  return lane && lane.geometry.magnification < 1.01 ? lane.geometry.distanceM : null;
 }
 
 /** The plane in one quantity: what the objective needs, the time, absorption over phase, retrieval's gain, transmission. */

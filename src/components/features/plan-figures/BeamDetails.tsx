@@ -25,7 +25,7 @@ export function BeamDetails({ open = false, ...beam }: BeamDetailsProps) {
   const lineWidth = Math.min(Math.max((width ?? SERVED.wide) - WORDS, SHORTEST), LONGEST_LINE);
   return (
     <details ref={ref} className="draw" open={open}>
-      <summary>
+      <summary data-shortcut="d">
         <span className="draw-line">
           <BeamLine {...beam} width={lineWidth} />
         </span>

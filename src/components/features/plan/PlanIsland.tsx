@@ -8,7 +8,6 @@ import { PickBar } from "./PickBar.tsx";
 import { PlanQuestion } from "./PlanQuestion.tsx";
 import { ShortlistSection } from "./ShortlistSection.tsx";
 import { type PlanStart, type PlanState, usePlan } from "./usePlan.ts";
-import { usePickKeys } from "./usePickKeys.ts";
 import { WorkingSection } from "./WorkingSection.tsx";
 
 /** @param start the page's state as one JSON text, a quarter of what it would be as a property of parts */
@@ -25,7 +24,6 @@ function Sections({ start }: { start: PlanStart }) {
   const plan = usePlan(start);
   // The figures are drawn in slices between what a person does: typing and pressing never wait for them.
   const later = useDeferredValue(plan);
-  usePickKeys(plan);
   return (
     <>
       <PlanQuestion plan={plan} />

@@ -165,7 +165,14 @@ function Row({ pick, result, gain, chosen, onChoose, onKeyDown }: RowProps) {
   const faults = pick.checks.filter(({ state }) => state !== "holds");
   const phase = candidate.technique === "phase";
   return (
-    <tr aria-selected={chosen} tabIndex={chosen ? 0 : -1} onClick={onChoose} onKeyDown={onKeyDown} data-pick={pick.id}>
+    <tr
+      aria-selected={chosen}
+      tabIndex={chosen ? 0 : -1}
+      onClick={onChoose}
+      onKeyDown={onKeyDown}
+      data-pick={pick.id}
+      data-shortcut={/^[1-9]$/.test(pick.id) ? pick.id : undefined}
+    >
       <td className="pick-rank">{pick.id}</td>
       <td className="pick-choice">
         <span className="pick-place">

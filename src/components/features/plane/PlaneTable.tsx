@@ -36,7 +36,7 @@ export function PlaneTable({ data, open, onToggle }: Props) {
       {...(open === undefined ? {} : { open })}
       onToggle={(event) => onToggle?.(event.currentTarget.open)}
     >
-      <summary>As a table</summary>
+      <summary data-shortcut="t">As a table</summary>
       <div className="scroll" tabIndex={0} role="region" aria-label={name}>
         <table className="list list-tight plane-table">
           <caption className="sr-only">{`${name}; ${rows.length} of ${energiesKeV.length} energies, ${columns.length} of ${distancesM.length} distances`}</caption>
