@@ -24,7 +24,8 @@ export const LIMIT_GROUPS: readonly LimitGroup[] = [
     perMinute: 120,
     // The plan page ranks on the server when it is asked a question.
     counts: ({ path, query }) =>
-      /^\/api\/v1\/plans\/rank\/?$/.test(path) || (/^\/plan(\/view\.json)?\/?$/.test(path) && query.size > 0),
+      /^\/api\/v1\/plans\/rank\/?$/.test(path) ||
+      (/^\/plan(\/(view\.json|picks\.csv|plane\.csv|answer\.json))?\/?$/.test(path) && query.size > 0),
   },
   {
     name: "evaluate",

@@ -51,6 +51,7 @@ describe("look-up limits", () => {
     ["/api/v1/plans/rank", "rank"],
     ["/plan?size=20%20um", "rank"],
     ["/plan/view.json?size=20%20um", "rank"],
+    ["/plan/plane.csv?size=20%20um", "rank"],
     ["/plan", undefined],
     ["/plans", undefined],
     ["/api/v1/elements/Fe/factors?version=1.0.0", undefined],

@@ -4,6 +4,7 @@ import { FormulaError, parseFormula } from "#src/lib/physics/index.ts";
 import { parseQuantity, QuantityError } from "#src/lib/quantities/index.ts";
 import type { MaterialStatement, PartStatement } from "#src/lib/schemas/material.ts";
 import type { KnownMaterial, MaterialFinder } from "./finder.ts";
+import { mendedFormula } from "./mend.ts";
 import type { Question } from "./question.ts";
 import { RecipeError, recipeStatement } from "./recipe.ts";
 
@@ -91,7 +92,16 @@ function formulaOfWords(words: string, finder: MaterialFinder): string {
   try {
     return parseFormula(words).text;
   } catch (error) {
-    if (!(error instanceof FormulaError) || looksLikeFormula(words)) throw error;
+    if (!(error instanceof FormulaError)) throw error;
+    if (looksLikeFormula(words)) {
+      throw new QuestionError("material", error.message, {
+        position: error.position,
+        suggestions: error.suggestions.map((suggestion) => {
+          const text = mendedFormula(words, error, suggestion);
+          return { text, words: text };
+        }),
+      });
+    }
     const near = finder.near(words).slice(0, NEAR_NAMES);
     throw new QuestionError(
       "material",

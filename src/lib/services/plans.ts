@@ -86,6 +86,17 @@ async function answeredPage(query: URLSearchParams): Promise<PlanPage> {
   }
 }
 
+/** The API's answer to the address's question, for files. @throws ProblemError invalid where a field cannot be read */
+export async function planFile(query: URLSearchParams): Promise<{ request: RankRequest; answer: RankAnswer }> {
+  const { request, faults } = readPlan(readPlanQuestion(query), handbookFinder());
+  if (!request) {
+    throw new ProblemError("invalid", "The question cannot be answered, so there is nothing to save.", {
+      errors: faults.map(({ field, message }) => ({ path: `/${field}`, code: "invalid", message })),
+    });
+  }
+  return { request, answer: await rankPlan(request) };
+}
+
 function namedIn(question: PlanQuestion): KnownMaterial[] {
   const finder = handbookFinder();
   const words = [

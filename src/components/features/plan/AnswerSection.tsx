@@ -6,6 +6,7 @@ import { ResponsiveChart } from "../chart/ResponsiveChart.tsx";
 import { MarkShape } from "#src/components/ui/Mark.tsx";
 import { Flag } from "#src/components/ui/Messages.tsx";
 import { doseText, energyText, percentText, ratioText, timeText } from "#src/lib/format/plan-quantities.ts";
+import { writePlanQuestion } from "#src/lib/plans/question.ts";
 import { copiedSentence, needText, pickPlace } from "#src/lib/plans/pick-words.ts";
 import type { PickView, PlanResult, ProfileView } from "#src/lib/plans/view.ts";
 import { methodTopicHref } from "#src/lib/format/method-links.ts";
@@ -190,9 +191,16 @@ function Ruler({ result }: { result: PlanResult }) {
   );
 }
 
+const FILES = [
+  { href: "/plan/picks.csv", words: "Save list, CSV" },
+  { href: "/plan/plane.csv", words: "Save plane, CSV" },
+  { href: "/plan/answer.json", words: "Save JSON" },
+] as const;
+
 function AnswerActions({ plan, result }: { plan: PlanState; result: PlanResult }) {
   const [copied, setCopied] = useState<"no" | "yes" | "by hand">("no");
   const sentence = copiedSentence(result);
+  const query = writePlanQuestion(plan.question).toString();
   const copy = async (): Promise<void> => {
     // The clipboard is open to pages served safely only; elsewhere the sentence is shown, to be copied by hand.
     const done = await navigator.clipboard?.writeText(sentence).then(
@@ -207,6 +215,11 @@ function AnswerActions({ plan, result }: { plan: PlanState; result: PlanResult }
       <button type="button" className="btn btn-go needs-script" data-shortcut="c" onClick={copy}>
         Copy as a sentence
       </button>
+      {FILES.map(({ href, words }) => (
+        <a key={href} className="btn" href={`${href}?${query}`} download>
+          {words}
+        </a>
+      ))}
       <span className="note" role="status">
         {copied === "yes" ? "Copied." : copied === "by hand" ? sentence : ""}
       </span>

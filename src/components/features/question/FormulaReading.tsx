@@ -1,4 +1,5 @@
 /** What is typed, read live as a formula: its mass and shares, or what keeps it from being one. */
+import { mendedFormula } from "#src/lib/lookup/mend.ts";
 import { Formula } from "#src/components/ui/Formula.tsx";
 import { Fault } from "#src/components/ui/Messages.tsx";
 import { compositionText } from "#src/lib/format/formula.ts";
@@ -57,24 +58,14 @@ export function FormulaReading({ text, reading, then, onMend }: Props) {
             key={suggestion}
             type="button"
             className="chip"
-            onClick={() => onMend(mended(text, reading.error, suggestion))}
+            onClick={() => onMend(mendedFormula(text, reading.error, suggestion))}
           >
-            {mended(text, reading.error, suggestion)}
+            {mendedFormula(text, reading.error, suggestion)}
           </button>
         ))}
       </span>
     </div>
   );
-}
-
-/** Suggestions are whole formulas, or a symbol for the one at fault. */
-function mended(text: string, error: FormulaError, suggestion: string): string {
-  if (error.code !== "unknownElement" && error.code !== "foreignLetter") return suggestion;
-  const rest = text
-    .trim()
-    .slice(error.position - 1)
-    .replace(/^(?:[A-Z][a-z]?|.)/u, suggestion);
-  return text.trim().slice(0, error.position - 1) + rest;
 }
 
 function fractionsOf(text: string): Record<string, number> {

@@ -78,6 +78,11 @@ describe("materials", () => {
     expect(ask({ material: "SiO2", density: "2.65" }).main?.formula).toBe("SiO2");
   });
 
+  it("offers the whole formula mended, not the symbol alone", () => {
+    expect(ask({ material: "Hx2O" }).faults[0]!.suggestions.map(({ text }) => text)).toEqual(["He2O", "Hg2O"]);
+    expect(ask({ material: "h2o" }).faults[0]!.suggestions.map(({ text }) => text)).toContain("H2O");
+  });
+
   it("that nothing is called so offer what is near; what looks like a formula is judged as one", () => {
     expect(ask({ material: "watr" }).faults[0]).toMatchObject({
       field: "material",
