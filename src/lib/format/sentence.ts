@@ -8,3 +8,6 @@ export function inSentence(name: string): string {
   const small = /^[A-Z][a-zà-ÿ]+(?![A-Z0-9])/.test(name) ? name.slice(0, 1).toLowerCase() + name.slice(1) : name;
   return small.replace(/^([^,]+), ([a-z-]+(?: density| molecular weight)?)$/, "$2 $1");
 }
+
+/** With a capital first letter. */
+export const capital = (words: string): string => words.slice(0, 1).toUpperCase() + words.slice(1);

@@ -23,14 +23,14 @@ const VALUE_COLUMNS = [
 ] as const satisfies readonly (keyof ConstantsValues)[];
 
 /** A comment line: line breaks and what a spreadsheet would run are taken out, `#` comes first. */
-const comment = (words: string): string => `# ${words.replace(/[\r\n\t\0]+/g, " ")}`;
+export const csvComment = (words: string): string => `# ${words.replace(/[\r\n\t\0]+/g, " ")}`;
 
 function withHead(view: View, question: Question, table: string): string {
   const main = view.main;
   const named = main
     ? `${main.label}, ${main.densityGCm3} g/cm3${main.densityEstimated ? " (estimate from additive volumes)" : ""}`
     : "no material";
-  return [comment(named), comment(citation(view.tableVersion, question.table)), table, ""].join("\r\n");
+  return [csvComment(named), csvComment(citation(view.tableVersion, question.table)), table, ""].join("\r\n");
 }
 
 /** One row an energy of the list, or the question's one energy where the list is empty. */

@@ -49,3 +49,8 @@ export function materialFinder(
     near,
   };
 }
+
+/** The same materials, each id once: the last one stands. */
+export function uniqueById(materials: readonly KnownMaterial[]): KnownMaterial[] {
+  return [...new Map(materials.map((material) => [material.id, material])).values()];
+}

@@ -56,8 +56,6 @@ const STEPS_PER_RIPPLE = 16;
 /** Pieces' intervals stay below this however large the feature: beyond RIPPLES (shapes.ts) there is no ripple. */
 const MOST_INTERVALS = 4000;
 const FOOT_NODES = 8;
-/** Least pieces of a band with a lower bound for each factor of 2 in u. */
-const PIECES_PER_OCTAVE = 1;
 
 /** The band, or null where its lower bound is not below u_N. `ring` is shared by the distances of a plane (layerRingPower). */
 export function frequencyBand(
@@ -78,7 +76,7 @@ export function frequencyBand(
   const bottomPerM = kind === "neighbourhood" ? 1 / (4 * acrossM(shape)) : 0;
   if (bottomPerM >= nyquistPerM) return null;
   const octaves = bottomPerM > 0 ? Math.log2(nyquistPerM / bottomPerM) : 0;
-  const pieces = bottomPerM > 0 ? Math.max(1, Math.ceil(octaves * PIECES_PER_OCTAVE)) : null;
+  const pieces = bottomPerM > 0 ? Math.max(1, Math.ceil(octaves)) : null;
   const ratio = pieces === null ? 2 : (nyquistPerM / bottomPerM) ** (1 / pieces);
   const cut = (index: number): number => (index === pieces ? bottomPerM : nyquistPerM / ratio ** index);
 

@@ -39,7 +39,9 @@ export * from "./plan/task.ts";
 export { type Beam, beamsOf } from "./plan/beam.ts";
 export * from "./plan/gains.ts";
 export {
+  countedDosePerFluence,
   defaultProjections,
+  doseGy,
   EARLY_ZERO_BELOW,
   firstReversal,
   type Forbidden,

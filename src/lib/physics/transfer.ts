@@ -84,8 +84,7 @@ export function bandSums(
       phaseRate > 0 ? Math.sqrt((terms.length === 1 ? FOOT_PHASE : TOGETHER) / phaseRate) : Infinity,
       filterRate > 0 ? Math.sqrt(FOOT_FILTER / filterRate) : Infinity,
     );
-    pieces = Math.min(MOST_PIECES, Math.max(0, Math.ceil(Math.log2(nyquist / footPerM))));
-    if (pieces === 0) pieces = 1;
+    pieces = Math.min(MOST_PIECES, Math.max(1, Math.ceil(Math.log2(nyquist / footPerM))));
     addFoot(band.foot(pieces - 1), absorption, phase, phaseRate, filterRate, out);
   }
   const single = terms.length === 1;

@@ -1,5 +1,6 @@
 /** A ranked plan as CSV: comment lines with the verdict and its citation, one header, numbers at full precision. */
 import Papa from "papaparse";
+import { csvComment } from "#src/lib/lookup/csv.ts";
 import type { Candidate, RankAnswer } from "#src/lib/schemas/plan-answer.ts";
 
 /** Columns of the list, in the API's names, which carry the units. */
@@ -33,11 +34,8 @@ const COLUMNS = [
   "agreesInAllTables",
 ] as const satisfies readonly (keyof Candidate)[];
 
-/** A comment line: line breaks are taken out, `#` comes first, so that no spreadsheet runs it. */
-const comment = (words: string): string => `# ${words.replace(/[\r\n\t\0]+/g, " ")}`;
-
 const withHead = ({ verdict, citation }: RankAnswer, table: string): string =>
-  [comment(verdict.summary), comment(citation), table, ""].join("\r\n");
+  [csvComment(verdict.summary), csvComment(citation), table, ""].join("\r\n");
 
 /** One row a candidate, then absorption's best; `role` tells them apart. */
 export function picksCsv(answer: RankAnswer): string {

@@ -1,5 +1,5 @@
 /** Where no point is allowed: the one that misses by least, and single changes that would let a point in. */
-import { countsFeatureDose, leastDetailM, type Lane, type RankedPlan } from "#src/lib/physics/index.ts";
+import { doseGy, leastDetailM, type Lane, type RankedPlan } from "#src/lib/physics/index.ts";
 import {
   distanceText,
   doseText,
@@ -41,8 +41,7 @@ function limitMiss({ plane, task }: RankedPlan): Miss | null {
     `The nearest miss, ${energyText(beam.energyEv / 1000)} and ${distanceText(lane.geometry.distanceM)}, needs ${objectiveText(task.objective, plane.objective[best]!)}`,
   ];
   const changes: string[] = [];
-  const perFluence = countsFeatureDose(task.sample) ? beam.featureDosePerFluence : beam.hostDosePerFluence;
-  const dose = perFluence === null ? null : perFluence * fluence;
+  const dose = doseGy(task, beam, fluence);
   const time = beam.fluxPerSM2 === null ? null : fluence / beam.fluxPerSM2;
   const over: number[] = [];
   if (limits.doseGy !== null && dose !== null && dose > limits.doseGy) {
@@ -76,11 +75,13 @@ function limitMiss({ plane, task }: RankedPlan): Miss | null {
   return { words: `${words.join(", ")}: by ${OBJECTIVE_WORDS[task.objective]} the best of the plane.`, changes };
 }
 
-/** Two digits, upwards, so that the limit named is enough. */
-function roundedUp(value: number): number {
+/** Two digits, towards the side on which the value named is enough. */
+function twoDigits(value: number, towards: typeof Math.ceil): number {
   const unit = 10 ** (Math.floor(Math.log10(value)) - 1);
-  return Number((Math.ceil((value / unit) * (1 - 1e-9)) * unit).toPrecision(2));
+  return Number((towards(Number((value / unit).toPrecision(12))) * unit).toPrecision(2));
 }
+const roundedUp = (value: number): number => twoDigits(value, Math.ceil);
+const roundedDown = (value: number): number => twoDigits(value, Math.floor);
 
 function pixelMiss({ plane, task }: RankedPlan): Miss | null {
   const outside = plane.lanes.filter((lane) => !lane.insideSample);
@@ -98,11 +99,6 @@ function pixelMiss({ plane, task }: RankedPlan): Miss | null {
     words: `Pixels are ${lengthText(best.geometry.pixelM)} in the sample at best; three must fit across the feature, so ${lengthText(largestM)} is the most.`,
     changes,
   };
-}
-
-function roundedDown(value: number): number {
-  const unit = 10 ** (Math.floor(Math.log10(value)) - 1);
-  return Number((Math.floor((value / unit) * (1 + 1e-9)) * unit).toPrecision(2));
 }
 
 function regimeMiss({ plane, task }: RankedPlan): Miss | null {

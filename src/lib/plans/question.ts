@@ -173,3 +173,11 @@ export function writeLayerLines(lines: readonly LayerLine[]): string {
     )
     .join("\n");
 }
+
+/** Words of the question that may name a kept material, each once. */
+export function namedWords({ feature, host, featureParts, hostParts, layers, screen }: PlanQuestion): string[] {
+  const words = [feature, host, featureParts, hostParts, layers, screen]
+    .flatMap((text) => text.split(/[;\n\t]/))
+    .map((word) => word.trim());
+  return [...new Set(words)].filter((word) => word !== "");
+}

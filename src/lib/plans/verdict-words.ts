@@ -1,7 +1,10 @@
 /** The verdict of a plan as a sentence built from its numbers, and nothing else. */
+import { FORBIDDEN_REASONS } from "./forbidden-words.ts";
+import type { ForbiddenCode } from "#src/lib/schemas/plan-answer.ts";
 import {
-  countsFeatureDose,
+  countedDoseGy,
   type Choice,
+  EITHER_BETWEEN,
   type PlanPick,
   type PlanTask,
   type RankedPlan,
@@ -18,11 +21,6 @@ import {
 type Objective = PlanTask["objective"];
 
 export const OBJECTIVE_WORDS: Readonly<Record<Objective, string>> = { dose: "dose", time: "time", fluence: "fluence" };
-
-/** The dose that the plan speaks of: the host's at its entrance, or the feature's in gas. */
-export function spokenDoseGy(task: PlanTask, { figures }: PlanPick): number | null {
-  return countsFeatureDose(task.sample) ? figures.featureDoseGy : figures.entranceDoseGy;
-}
 
 /** Objective in words: "0.31 Gy", "1.4 s", "41 per µm²". */
 export function objectiveText(objective: Objective, value: number): string {
@@ -103,7 +101,7 @@ export function verdictSummary(ranked: RankedPlan): string {
 }
 
 function needSentence(task: PlanTask, pick: PlanPick, who: string | null, contact: number | null): string {
-  const dose = spokenDoseGy(task, pick);
+  const dose = countedDoseGy(task, pick);
   const { fluencePerM2, timeS } = pick.figures;
   const amount = dose === null ? (fluencePerM2 === null ? null : fluenceText(fluencePerM2 * 1e-12)) : doseText(dose);
   const needs = `${amount ?? "an unknown dose"}${timeS === null ? "" : ` in ${timeText(timeS)}`}`;
@@ -113,7 +111,7 @@ function needSentence(task: PlanTask, pick: PlanPick, who: string | null, contac
 
 function absorptionSentence(ranked: RankedPlan, best: PlanPick, contact: number | null): string {
   const { task, doseAdvantage, choice } = ranked;
-  const dose = spokenDoseGy(task, best);
+  const dose = countedDoseGy(task, best);
   const who = choice === "absorption" ? "Absorption" : `Absorption at its best, ${placeText(best, contact)},`;
   const amount = dose === null ? "an unknown dose" : doseText(dose);
   const ratio =
@@ -124,7 +122,8 @@ function absorptionSentence(ranked: RankedPlan, best: PlanPick, contact: number 
   return `${who} needs ${amount}${ratio}${allowed}.`;
 }
 
-const sideOf = (advantage: number): Choice => (advantage > 1.25 ? "phase" : advantage < 0.8 ? "absorption" : "either");
+const sideOf = (advantage: number): Choice =>
+  advantage > EITHER_BETWEEN[1] ? "phase" : advantage < EITHER_BETWEEN[0] ? "absorption" : "either";
 const disagrees = (dose: number, objective: number): boolean => sideOf(dose) !== sideOf(objective);
 const winnerText = (advantage: number): string =>
   ({ phase: "phase is ahead", absorption: "absorption is ahead", either: "neither is ahead", none: "" })[
@@ -150,22 +149,9 @@ export function answerSentences(ranked: RankedPlan): AnswerSentences {
 /** Why the objective is not met anywhere: the commonest reason on the plane. */
 function reasonOf({ candidates, plane }: RankedPlan): string | null {
   if (candidates.length > 0) return null;
-  const counts = new Map<string, number>();
+  const counts = new Map<ForbiddenCode, number>();
   for (const code of plane.forbidden) if (code !== null) counts.set(code, (counts.get(code) ?? 0) + 1);
   const [most] = [...counts].sort((a, b) => b[1] - a[1]);
   if (!most) return "The two materials show no contrast here.";
-  return `${NOWHERE[most[0]] ?? "Nothing is allowed"} at ${most[1]} of ${plane.forbidden.length} points.`;
+  return `${FORBIDDEN_REASONS[most[0]].note} at ${most[1]} of ${plane.forbidden.length} points.`;
 }
-
-const NOWHERE: Readonly<Record<string, string>> = {
-  insideSample: "The detector would stand inside the sample",
-  notInTable: "A material has no values in the table",
-  nearEdge: "An absorption edge is too near",
-  undersampled: "Fewer than three pixels fit across the feature",
-  contrastReversal: "Contrast turns over within the resolved band",
-  nearFieldLeft: "The near field is left",
-  transmissionLow: "Less passes the sample than allowed",
-  transmissionHigh: "More passes the sample than allowed",
-  overDose: "The dose limit is broken",
-  overTime: "The time limit is broken",
-};

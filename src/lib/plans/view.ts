@@ -5,6 +5,7 @@
 import {
   acrossM,
   contrastProfile,
+  countedDoseGy,
   countsFeatureDose,
   type Edge,
   FWHM_PER_SIGMA,
@@ -27,7 +28,7 @@ import type { PlanFault } from "./faults.ts";
 import type { Objective, Use } from "./question.ts";
 import type { ResolvedPlan } from "./resolve-plan.ts";
 import { type Miss, missOf } from "./miss.ts";
-import { answerSentences, type AnswerSentences, contactDistanceM, spokenDoseGy } from "./verdict-words.ts";
+import { answerSentences, type AnswerSentences, contactDistanceM } from "./verdict-words.ts";
 
 export interface PickView {
   readonly id: string;
@@ -173,7 +174,7 @@ export function pickView(pick: PlanPick, id: string, ranked: RankedPlan, plan: R
     id,
     candidate: candidateOf(pick, plan),
     objective: figures.objective === null ? null : figures.objective * (task.objective === "fluence" ? 1e-12 : 1),
-    doseGy: spokenDoseGy(task, pick),
+    doseGy: countedDoseGy(task, pick),
     inContact: contact !== null && geometry.distanceM <= contact * (1 + 1e-9),
     checks: checkLines(
       pick,

@@ -4,10 +4,10 @@
  */
 import type { ScatteringTables } from "#src/lib/physics/index.ts";
 import { ProblemError } from "#src/lib/http/problems.ts";
-import type { KnownMaterial } from "#src/lib/lookup/finder.ts";
+import { type KnownMaterial, uniqueById } from "#src/lib/lookup/finder.ts";
 import { type MaterialLookup, StatementError } from "#src/lib/materials/resolve.ts";
 import { evaluateJob, rankJob, viewJob } from "#src/lib/plans/jobs.ts";
-import { type PlanQuestion, readPlanQuestion } from "#src/lib/plans/question.ts";
+import { namedWords, type PlanQuestion, readPlanQuestion } from "#src/lib/plans/question.ts";
 import { readPlan } from "#src/lib/plans/read-question.ts";
 import type { PlanView } from "#src/lib/plans/view.ts";
 import type { EvaluateRequest, RankRequest } from "#src/lib/schemas/plan.ts";
@@ -99,22 +99,8 @@ export async function planFile(query: URLSearchParams): Promise<{ request: RankR
 
 function namedIn(question: PlanQuestion): KnownMaterial[] {
   const finder = handbookFinder();
-  const words = [
-    question.feature,
-    question.host,
-    question.featureParts,
-    question.hostParts,
-    question.layers,
-    question.screen,
-  ]
-    .flatMap((text) => text.split(/[;\n\t]/))
-    .map((word) => word.trim())
-    .filter((word) => word !== "");
-  const found = words.flatMap((word) => [
-    ...(finder.find(word) ? [finder.find(word)!] : []),
-    ...finder.ofFormula(word),
-  ]);
-  return [...new Map(found.map((material) => [material.id, slimMaterial(material)])).values()];
+  const found = namedWords(question).flatMap((word) => [finder.find(word) ?? [], finder.ofFormula(word)].flat());
+  return uniqueById(found).map(slimMaterial);
 }
 
 /** Where the front server put the worker's program (server/front.ts). */

@@ -7,11 +7,11 @@ import {
   type RankedPlan,
   type ScatteringTables,
 } from "#src/lib/physics/index.ts";
-import { type KnownMaterial, materialFinder, type MaterialFinder } from "#src/lib/lookup/finder.ts";
+import { type KnownMaterial, materialFinder, type MaterialFinder, uniqueById } from "#src/lib/lookup/finder.ts";
 import { searchMaterials } from "#src/lib/lookup/search.client.ts";
 import { StatementError } from "#src/lib/materials/resolve.ts";
 import { viewJob } from "#src/lib/plans/jobs.ts";
-import type { PlanQuestion } from "#src/lib/plans/question.ts";
+import { namedWords, type PlanQuestion } from "#src/lib/plans/question.ts";
 import { readPlan } from "#src/lib/plans/read-question.ts";
 import { resolvePlan, type ResolvedPlan } from "#src/lib/plans/resolve-plan.ts";
 import { pickView, planeView } from "#src/lib/plans/view.ts";
@@ -108,23 +108,14 @@ async function loaded(request: RankRequest, finder: MaterialFinder, info: TableI
 /** Known materials and those that the question's words name; the handbook is asked once for each word. */
 async function finderFor(question: PlanQuestion, known: readonly KnownMaterial[]) {
   const start = materialFinder(known);
-  const words = [
-    question.feature,
-    question.host,
-    question.featureParts,
-    question.hostParts,
-    question.layers,
-    question.screen,
-  ]
-    .flatMap((text) => text.split(/[;\n\t]/))
-    .map((word) => word.trim())
-    .filter((word) => word.length >= 2 && word.length <= 64 && /\p{L}/u.test(word) && !start.find(word));
+  const words = namedWords(question).filter(
+    (word) => word.length >= 2 && word.length <= 64 && /\p{L}/u.test(word) && !start.find(word),
+  );
   await Promise.all(
-    [...new Set(words)].map(async (word) => {
+    words.map(async (word) => {
       if (!found.has(word)) found.set(word, await searchMaterials(word, 8).catch(() => []));
     }),
   );
   const learnt = words.flatMap((word) => found.get(word) ?? []);
-  const all = [...new Map([...known, ...learnt].map((material) => [material.id, material])).values()];
-  return { finder: materialFinder(all, (word) => found.get(word) ?? []), learnt };
+  return { finder: materialFinder(uniqueById([...known, ...learnt]), (word) => found.get(word) ?? []), learnt };
 }

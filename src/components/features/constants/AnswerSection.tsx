@@ -1,5 +1,5 @@
 /** Values at the question's energy in two groups, phase and absorption, with what the tables say of each other. */
-import { useState } from "react";
+import { useCopy } from "#src/components/ui/useCopy.ts";
 import { ValueGroup } from "#src/components/ui/ValueList.tsx";
 import { methodHref, NOTE_EXPLANATIONS } from "#src/lib/format/method-links.ts";
 import { formatGiven, formatPercent, significantText } from "#src/lib/format/numbers.ts";
@@ -132,18 +132,9 @@ function AnswerActions({
   question: Question;
   version: string;
 }) {
-  const [copied, setCopied] = useState<"no" | "yes" | "by hand">("no");
   const query = writeQuestion(question).toString();
   const sentence = `${main.label}, ${formatGiven(main.densityGCm3)} g/cm³${main.densityEstimated ? " (estimate)" : ""}, at ${formatGiven(row.energyKeV)} keV: δ ${significantText(values.delta)}, β ${significantText(values.beta)}, μ ${significantText(values.muTotalPerCm)} cm⁻¹ (total), δ/β ${significantText(values.deltaOverBeta)}. Rimelight tables ${version}, EPDL97 (Cullen, Hubbell, Kissel 1997), ${new Date().toISOString().slice(0, 10)}.`;
-  const copy = async (): Promise<void> => {
-    // The clipboard is open to pages served safely only; elsewhere the sentence is shown, to be copied by hand.
-    const done = await navigator.clipboard?.writeText(sentence).then(
-      () => true,
-      () => false,
-    );
-    setCopied(done === true ? "yes" : "by hand");
-    if (done === true) setTimeout(() => setCopied("no"), 2500);
-  };
+  const { copy, said } = useCopy(sentence);
   return (
     <div className="actions">
       <button type="button" className="btn btn-go needs-script" onClick={copy}>
@@ -156,7 +147,7 @@ function AnswerActions({
         Save JSON
       </a>
       <span className="note" role="status">
-        {copied === "yes" ? "Copied." : copied === "by hand" ? sentence : ""}
+        {said}
       </span>
     </div>
   );

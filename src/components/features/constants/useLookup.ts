@@ -3,10 +3,11 @@
  * the tables of the elements it needs. Until those are here the served answer stands.
  */
 import { useQueries, type UseQueryResult } from "@tanstack/react-query";
+import { useAddress } from "../question/useAddress.ts";
 import { useEffect, useMemo, useRef, useState } from "react";
 import { useNamedMaterials } from "#src/components/features/question/useNamedMaterials.ts";
 import { answerQuestion } from "#src/lib/lookup/answer.ts";
-import { type KnownMaterial, materialFinder, type MaterialFinder } from "#src/lib/lookup/finder.ts";
+import { type KnownMaterial, materialFinder, type MaterialFinder, uniqueById } from "#src/lib/lookup/finder.ts";
 import { type Question, writeQuestion } from "#src/lib/lookup/question.ts";
 import { readRecipe } from "#src/lib/lookup/recipe.ts";
 import { materialOfLine, QuestionError, statedMaterial } from "#src/lib/lookup/state-material.ts";
@@ -54,7 +55,7 @@ export function useLookup(start: LookupStart): Lookup {
     latest.current = { question, view };
   }, [question, view]);
 
-  useAddress(question, start.question);
+  useAddress(writeQuestion(question).toString());
   return {
     question,
     view,
@@ -64,10 +65,6 @@ export function useLookup(start: LookupStart): Lookup {
     change: (fields) => setQuestion((before) => ({ ...before, ...fields })),
     learn: (materials) => setLearnt((before) => uniqueById([...before, ...materials])),
   };
-}
-
-function uniqueById(materials: readonly KnownMaterial[]): KnownMaterial[] {
-  return [...new Map(materials.map((material) => [material.id, material])).values()];
 }
 
 /** Words of the question that may name a kept material. */
@@ -115,20 +112,4 @@ function loadedElements(results: UseQueryResult<LoadedElement>[]) {
       ? "The tables did not arrive. The values below answer the question before; try again when the connection is back."
       : null,
   };
-}
-
-// Browsers slow pages down that write the address on every pointer move.
-const ADDRESS_DELAY_MS = 250;
-
-/** Keeps the address in step with the question, so that it can be copied at any time. */
-function useAddress(question: Question, first: Question): void {
-  useEffect(() => {
-    if (question === first) return;
-    const timer = setTimeout(() => {
-      const address = new URL(location.href);
-      address.search = writeQuestion(question).toString();
-      history.replaceState(history.state, "", address);
-    }, ADDRESS_DELAY_MS);
-    return () => clearTimeout(timer);
-  }, [question, first]);
 }

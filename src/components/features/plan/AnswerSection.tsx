@@ -1,5 +1,5 @@
 /** The verdict, what it rests on, and where the doses of both techniques stand. */
-import { useState } from "react";
+import { useCopy } from "#src/components/ui/useCopy.ts";
 import { DoseRuler } from "../plan-figures/DoseRuler.tsx";
 import { SameScalePair } from "../plan-figures/SameScalePair.tsx";
 import { ResponsiveChart } from "../chart/ResponsiveChart.tsx";
@@ -179,7 +179,7 @@ function Ruler({ result }: { result: PlanResult }) {
           absorption={absorption}
           limit={limit}
           ratioWords={
-            ratio === null || (ratio > 0.8 && ratio < 1.25)
+            ratio === null || result.choice === "either"
               ? null
               : ratio > 1
                 ? `${ratioText(ratio)}\u00a0× less ${words}`
@@ -198,18 +198,9 @@ const FILES = [
 ] as const;
 
 function AnswerActions({ plan, result }: { plan: PlanState; result: PlanResult }) {
-  const [copied, setCopied] = useState<"no" | "yes" | "by hand">("no");
   const sentence = copiedSentence(result);
   const query = writePlanQuestion(plan.question).toString();
-  const copy = async (): Promise<void> => {
-    // The clipboard is open to pages served safely only; elsewhere the sentence is shown, to be copied by hand.
-    const done = await navigator.clipboard?.writeText(sentence).then(
-      () => true,
-      () => false,
-    );
-    setCopied(done === true ? "yes" : "by hand");
-    if (done === true) setTimeout(() => setCopied("no"), 2500);
-  };
+  const { copy, said } = useCopy(sentence);
   return (
     <div className="actions">
       <button type="button" className="btn btn-go needs-script" data-shortcut="c" onClick={copy}>
@@ -221,7 +212,7 @@ function AnswerActions({ plan, result }: { plan: PlanState; result: PlanResult }
         </a>
       ))}
       <span className="note" role="status">
-        {copied === "yes" ? "Copied." : copied === "by hand" ? sentence : ""}
+        {said}
       </span>
       <span className="note">
         {plan.tooLong

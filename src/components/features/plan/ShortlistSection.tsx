@@ -3,6 +3,8 @@ import { type KeyboardEvent, useRef, useState } from "react";
 import { MarkShape } from "#src/components/ui/Mark.tsx";
 import { Flag } from "#src/components/ui/Messages.tsx";
 import { percentText, ratioText, rounded, timeText } from "#src/lib/format/plan-quantities.ts";
+import { capital } from "#src/lib/format/sentence.ts";
+import { FORBIDDEN_REASONS } from "#src/lib/plans/forbidden-words.ts";
 import { needText, OBJECTIVE_NAMES, pickPlace, pickWhy } from "#src/lib/plans/pick-words.ts";
 import type { PickView, PlanResult } from "#src/lib/plans/view.ts";
 import { PlaneSection } from "./PlaneSection.tsx";
@@ -143,8 +145,6 @@ function Shortlist({ plan, result }: { plan: PlanState; result: PlanResult }) {
   );
 }
 
-const capital = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
-
 function keyOf({ candidate, objective }: PickView, order: Order): number {
   if (order === "objective") return objective ?? Infinity;
   if (order === "time") return candidate.timeS ?? Infinity;
@@ -183,7 +183,7 @@ function Row({ pick, result, gain, chosen, onChoose, onKeyDown }: RowProps) {
           {pickPlace(pick)}
         </span>
         <small>{pickWhy(pick, result.absorptionId)}</small>
-        {pick.forbiddenBy === null ? null : <Flag state="fails">{FORBIDDEN_WORDS[pick.forbiddenBy]}</Flag>}
+        {pick.forbiddenBy === null ? null : <Flag state="fails">{FORBIDDEN_REASONS[pick.forbiddenBy].short}</Flag>}
         {faults.length > 0 ? (
           <Flag state="check">
             {faults.length === 1
@@ -221,19 +221,6 @@ function Row({ pick, result, gain, chosen, onChoose, onKeyDown }: RowProps) {
     </tr>
   );
 }
-
-export const FORBIDDEN_WORDS: Readonly<Record<string, string>> = {
-  insideSample: "detector inside the sample",
-  notInTable: "no values in the table",
-  nearEdge: "too close to an edge",
-  undersampled: "fewer than three pixels",
-  contrastReversal: "contrast turns over",
-  nearFieldLeft: "near field left",
-  transmissionLow: "too little let through",
-  transmissionHigh: "too much let through",
-  overDose: "over your dose limit",
-  overTime: "over your time limit",
-};
 
 const CHECK_WORDS: Readonly<Record<string, string>> = {
   transmissionLow: "little is let through",

@@ -21,12 +21,9 @@ export function WorkingSection({ result, stale }: { result: PlanResult | null; s
   const { working, picks, absorptionId } = result;
   const alone = picks.find(({ id }) => id === absorptionId);
   const steps = stepsOf(result);
-  const starts = steps.map((_, index) =>
-    steps.slice(0, index).reduce((product, { factor }) => product * (factor ?? 1), 1),
-  );
-  const reach = Math.max(...steps.map(({ factor }, index) => Math.abs(Math.log10(starts[index]! * (factor ?? 1)))), 1);
-  const low = Math.min(0, ...steps.map(({ factor }, index) => Math.log10(starts[index]! * (factor ?? 1))));
-  const high = Math.max(0, ...steps.map(({ factor }, index) => Math.log10(starts[index]! * (factor ?? 1))));
+  // log₁₀ of the product before each step; the last is that of all.
+  const logs = steps.reduce((before, { factor }) => [...before, before.at(-1)! + Math.log10(factor ?? 1)], [0]);
+  const [low, high] = [Math.min(...logs), Math.max(...logs)];
   return (
     <section className="sec" aria-labelledby="working-heading">
       <div className="sec-head">
@@ -66,7 +63,7 @@ export function WorkingSection({ result, stale }: { result: PlanResult | null; s
                     <small>{step.words}</small>
                   ) : (
                     <>
-                      <FactorBar from={Math.log10(starts[index]!)} by={Math.log10(step.factor)} low={low} high={high} />
+                      <FactorBar from={logs[index]!} by={Math.log10(step.factor)} low={low} high={high} />
                       <small>{`${step.words}: ${effect(step.factor)}`}</small>
                     </>
                   )}
@@ -83,7 +80,6 @@ export function WorkingSection({ result, stale }: { result: PlanResult | null; s
             </tr>
           </tfoot>
         </table>
-        {reach > 12 ? <p className="note">The bars span {rounded(reach, 2)} decades.</p> : null}
       </div>
     </section>
   );

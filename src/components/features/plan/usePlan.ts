@@ -3,7 +3,8 @@
  * served answer stands, marked as the answer to the question before.
  */
 import { useCallback, useEffect, useMemo, useRef, useState } from "react";
-import type { KnownMaterial } from "#src/lib/lookup/finder.ts";
+import { useAddress } from "../question/useAddress.ts";
+import { type KnownMaterial, uniqueById } from "#src/lib/lookup/finder.ts";
 import { ADDRESS_CHARACTERS, type PlanQuestion, writePlanQuestion } from "#src/lib/plans/question.ts";
 import type { PickView, PlaneQuantity, PlaneView, PlanView } from "#src/lib/plans/view.ts";
 import type { TableInfo } from "#src/lib/tables/info.ts";
@@ -44,7 +45,6 @@ export interface PlanState {
 
 /** Typing in a field of the sentence must not start a ranking for every letter. */
 const SETTLE_MS = 120;
-const ADDRESS_DELAY_MS = 250;
 const MOST_FREE_PICKS = 8;
 
 export function usePlan(start: PlanStart): PlanState {
@@ -100,7 +100,9 @@ export function usePlan(start: PlanStart): PlanState {
     return () => clearTimeout(timer);
   }, [question, rank, start.view]);
   useEffect(() => () => runner.current?.close(), []);
-  useAddress(question, start.question);
+  const query = writePlanQuestion(question).toString();
+  const tooLong = query.length > ADDRESS_CHARACTERS;
+  useAddress(tooLong ? null : query);
 
   /** The worker holds the plane that is shown, so that its points can be asked for. */
   const primed = useRef<PlanView["result"]>(null);
@@ -131,7 +133,7 @@ export function usePlan(start: PlanStart): PlanState {
     progress: question === answer.question ? null : progress,
     trouble,
     known,
-    tooLong: writePlanQuestion(question).toString().length > ADDRESS_CHARACTERS,
+    tooLong,
     picks,
     chosen: picks.find(({ id }) => id === chosenId) ?? picks[0] ?? null,
     plane: plane ?? shown?.plane ?? null,
@@ -154,23 +156,4 @@ export function usePlan(start: PlanStart): PlanState {
       setTrouble("Stopped. The answer below is to the question before.");
     },
   };
-}
-
-function uniqueById(materials: readonly KnownMaterial[]): KnownMaterial[] {
-  return [...new Map(materials.map((material) => [material.id, material])).values()];
-}
-
-/** Keeps the address in step with the question, unless it would be too long for one. */
-function useAddress(question: PlanQuestion, first: PlanQuestion): void {
-  useEffect(() => {
-    if (question === first) return;
-    const timer = setTimeout(() => {
-      const query = writePlanQuestion(question).toString();
-      if (query.length > ADDRESS_CHARACTERS) return;
-      const address = new URL(location.href);
-      address.search = query;
-      history.replaceState(history.state, "", address);
-    }, ADDRESS_DELAY_MS);
-    return () => clearTimeout(timer);
-  }, [question, first]);
 }

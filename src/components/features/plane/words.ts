@@ -1,30 +1,13 @@
 /** What a plane says in words: why points are forbidden, what its line means, and what stands at its cross. */
 import { distanceText, energyText } from "#src/lib/format/plan-quantities.ts";
+import { FORBIDDEN_REASONS, type Reason } from "#src/lib/plans/forbidden-words.ts";
 import type { ForbiddenCode } from "#src/lib/schemas/plan-answer.ts";
 import type { PlaneData } from "./types.ts";
 
-interface Reason {
-  /** A sentence without its full stop. */
-  readonly note: string;
-  /** For a cell of the table. */
-  readonly short: string;
-}
-
-const REASONS: Readonly<Record<ForbiddenCode, Reason>> = {
-  insideSample: { note: "The detector would stand inside the sample", short: "inside the sample" },
-  notInTable: { note: "A material has no values in the table", short: "not in the table" },
-  nearEdge: { note: "Too close to an absorption edge", short: "near an edge" },
-  undersampled: { note: "The feature spans fewer than three pixels", short: "too few pixels" },
-  contrastReversal: { note: "Contrast reverses within the resolved band", short: "contrast reverses" },
-  nearFieldLeft: { note: "The near field is left", short: "near field left" },
-  transmissionLow: { note: "Less passes the sample than allowed", short: "too little passes" },
-  transmissionHigh: { note: "More passes the sample than allowed", short: "too much passes" },
-  overDose: { note: "Over the dose limit", short: "over the dose limit" },
-  overTime: { note: "Over the time limit", short: "over the time limit" },
-};
 const OTHER: Reason = { note: "Not allowed", short: "not allowed" };
 
-const reasonOf = (code: string): Reason => (Object.hasOwn(REASONS, code) ? REASONS[code as ForbiddenCode] : OTHER);
+const reasonOf = (code: string): Reason =>
+  Object.hasOwn(FORBIDDEN_REASONS, code) ? FORBIDDEN_REASONS[code as ForbiddenCode] : OTHER;
 
 /** A forbidden point in a word or two. */
 export const forbiddenShort = (code: string): string => reasonOf(code).short;
@@ -32,8 +15,8 @@ export const forbiddenShort = (code: string): string => reasonOf(code).short;
 /** Why points of this plane are hatched: one sentence without its full stop for each reason that occurs, each once. */
 export function forbiddenNotes({ forbidden }: Pick<PlaneData, "forbidden">): string[] {
   const found = new Set(forbidden.flat().filter((code) => code !== null));
-  const known = Object.keys(REASONS).filter((code) => found.has(code));
-  const others = [...found].some((code) => !Object.hasOwn(REASONS, code));
+  const known = Object.keys(FORBIDDEN_REASONS).filter((code) => found.has(code));
+  const others = [...found].some((code) => !Object.hasOwn(FORBIDDEN_REASONS, code));
   return [...known.map((code) => reasonOf(code).note), ...(others ? [OTHER.note] : [])];
 }
 

@@ -107,9 +107,13 @@ export function needOf(task: PlanTask, lane: Lane, beam: Beam, signalM2: number 
   return Number.isFinite(fluencePerM2) && fluencePerM2 > 0 ? { fluencePerM2, byCounts: count > detect } : null;
 }
 
-/** The dose that limits and objective speak of, Gy: the host's at its entrance, the feature's own in gas or vacuum. */
+/** Gy m² of the dose that limits and objective speak of: the host's at its entrance, the feature's own in gas or vacuum. */
+export const countedDosePerFluence = ({ sample }: Pick<PlanTask, "sample">, beam: Beam): number | null =>
+  countsFeatureDose(sample) ? beam.featureDosePerFluence : beam.hostDosePerFluence;
+
+/** That dose for a fluence, Gy; null where there is no matter to take it. */
 export function doseGy(task: PlanTask, beam: Beam, fluencePerM2: number): number | null {
-  const perFluence = countsFeatureDose(task.sample) ? beam.featureDosePerFluence : beam.hostDosePerFluence;
+  const perFluence = countedDosePerFluence(task, beam);
   return perFluence === null ? null : perFluence * fluencePerM2;
 }
 

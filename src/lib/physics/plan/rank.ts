@@ -94,7 +94,8 @@ export function rankPlan(task: PlanTask, grid: Grid, tables: ScatteringTables, o
   return { task, plane, candidates, absorptionBest, ...verdictOf(task, candidates[0] ?? null, absorptionBest) };
 }
 
-const countedDose = (task: PlanTask, { figures }: PlanPick): number | null =>
+/** The dose that limits and verdict speak of: the host's at its entrance, the feature's own in gas or vacuum. */
+export const countedDoseGy = (task: PlanTask, { figures }: PlanPick): number | null =>
   countsFeatureDose(task.sample) ? figures.featureDoseGy : figures.entranceDoseGy;
 
 function verdictOf(
@@ -107,7 +108,7 @@ function verdictOf(
   const ratio = (above: number | null, below: number | null): number | null =>
     above === null || below === null || !(below > 0) ? null : above / below;
   const objectiveAdvantage = ratio(absorption?.figures.objective ?? null, first.figures.objective);
-  const doseAdvantage = absorption && ratio(countedDose(task, absorption), countedDose(task, first));
+  const doseAdvantage = absorption && ratio(countedDoseGy(task, absorption), countedDoseGy(task, first));
   const choice: Choice =
     objectiveAdvantage === null || objectiveAdvantage > EITHER_BETWEEN[1]
       ? "phase"

@@ -8,7 +8,8 @@ import { absorptionSums } from "../transfer.ts";
 import type { PointFigures } from "./figures.ts";
 import { contrastProfile, largestContrast } from "./profile.ts";
 import { acrossM } from "../shapes.ts";
-import { countsFeatureDose, type PlanTask } from "./task.ts";
+import { countedDosePerFluence } from "./point.ts";
+import type { PlanTask } from "./task.ts";
 
 export interface WorkingSide {
   /** kΔδ d in rad and Δμ d of the feature's middle. */
@@ -67,7 +68,7 @@ export function workingOf(task: PlanTask, phase: PointFigures, absorption: Point
 function sideOf(task: PlanTask, figures: PointFigures, phase: boolean): WorkingSide | null {
   const { beam, geometry, rankedSignalM2, fluencePerM2 } = figures;
   const { shape } = task.sample;
-  const dosePerFluence = countsFeatureDose(task.sample) ? beam.featureDosePerFluence : beam.hostDosePerFluence;
+  const dosePerFluence = countedDosePerFluence(task, beam);
   const band = frequencyBand("signal", shape, geometry);
   const signal = phase ? figures.signalM2 : band && absorptionSums(band).first * beam.absorptionPerM ** 2;
   if (!signal || rankedSignalM2 === null || fluencePerM2 === null || !dosePerFluence) return null;

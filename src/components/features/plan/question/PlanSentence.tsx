@@ -2,6 +2,7 @@
 import { type ReactNode, useState } from "react";
 import { Blank } from "#src/components/features/question/Blank.tsx";
 import { FaultWithFixes } from "#src/components/features/question/FaultWithFixes.tsx";
+import { capital } from "#src/lib/format/sentence.ts";
 import { materialFinder } from "#src/lib/lookup/finder.ts";
 import type { PlanQuestion } from "#src/lib/plans/question.ts";
 import { planWords } from "#src/lib/plans/words.ts";
@@ -88,5 +89,3 @@ export function PlanSentence({ question, words: given, faults, known, change, le
     </div>
   );
 }
-
-const capital = (text: string): string => text.slice(0, 1).toUpperCase() + text.slice(1);
